@@ -18,6 +18,16 @@
 
 pub mod spec;
 
+pub mod spline;
+
+pub mod airfoil;
+
 pub mod planform;
 
+pub mod loft;
+
 pub mod solid;
+
+pub mod mesh;
+
+pub mod measure;

@@ -1,4 +1,4 @@
-//! Stations, reference wing, mean aerodynamic chord, setting, and the construction lines that show them.
+//! Construction geometry as the files show it.
 
 use nalgebra::Point3;
 

@@ -1,18 +1,6 @@
-//! The closed B-rep of a wing and its check.
+//! What the faces of a wing are called.
 
-use truck_modeling::Solid as Shape;
-
-/// A closed solid: the kernel's shape and what each of its faces is.
-#[derive(Clone, Debug)]
-pub struct Solid {
-    /// The part's name, such as `wing` or `wing starboard`.
-    pub name: String,
-    /// The shape: one closed shell. Surfaces are planes or B-spline surfaces (non-rational), edge curves lines or B-splines,
-    /// each running from the edge's first vertex to its second.
-    pub shape: Shape,
-    /// What each face is, in the order of `shape.boundaries()[0]`.
-    pub faces: Vec<FaceLabel>,
-}
+use std::fmt;
 
 /// What a face of the wing is.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -47,4 +35,13 @@ pub enum Side {
     Starboard,
     /// y < 0.
     Port,
+}
+
+impl fmt::Display for Side {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        f.write_str(match self {
+            Self::Starboard => "starboard",
+            Self::Port => "port",
+        })
+    }
 }

@@ -1,0 +1,53 @@
+//! The chord line between two stations of a panel with straight elements.
+
+use nalgebra::{Point3, Vector3};
+
+use super::Station;
+
+/// A chord line on the starboard side.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct ChordLine {
+    /// Front end \[mm\].
+    pub leading_edge: Point3<f64>,
+    /// Rear end \[mm\].
+    pub trailing_edge: Point3<f64>,
+    /// Upward direction of the section: unit vector square to x.
+    pub up: Vector3<f64>,
+}
+
+impl ChordLine {
+    /// The chord line at `fraction` (0 to 1) of panel `panel`: between the ends, front and rear run straight.
+    ///
+    /// Between equal planes its turn from the inner section is
+    /// `tan θ = η c_o sin θ_o / ((1 - η) c_i + η c_o cos θ_o)`, with θ_o the outer section's.
+    pub fn between(stations: &[Station], (panel, fraction): (usize, f64)) -> Self {
+        let (inner, outer) = (&stations[panel], &stations[panel + 1]);
+        let blend = |a: Point3<f64>, b: Point3<f64>| a + (b - a) * fraction;
+        Self {
+            leading_edge: blend(inner.leading_edge(), outer.leading_edge()),
+            trailing_edge: blend(inner.trailing_edge(), outer.trailing_edge()),
+            up: (inner.up * (1.0 - fraction) + outer.up * fraction).normalize(),
+        }
+    }
+
+    /// Length \[mm\].
+    pub fn length(&self) -> f64 {
+        (self.trailing_edge - self.leading_edge).norm()
+    }
+
+    /// Unit vector from front to rear.
+    pub fn direction(&self) -> Vector3<f64> {
+        (self.trailing_edge - self.leading_edge).normalize()
+    }
+
+    /// Incidence, leading edge up \[rad\].
+    pub fn incidence(&self) -> f64 {
+        let chord = self.trailing_edge - self.leading_edge;
+        (-chord.dot(&self.up)).atan2(chord.x)
+    }
+
+    /// Point at a chord fraction \[mm\].
+    pub fn at(&self, fraction: f64) -> Point3<f64> {
+        self.leading_edge + (self.trailing_edge - self.leading_edge) * fraction
+    }
+}

@@ -1,0 +1,13 @@
+//! B-splines: knot vectors, curves, surfaces and least squares on them.
+//!
+//! Everything here is non-rational, clamped, and of degree 5 at most.
+
+mod curve;
+mod knots;
+mod least_squares;
+mod surface;
+
+pub use curve::{Curve, Function};
+pub use knots::{Derivatives, Knots, MAX_DEGREE};
+pub use least_squares::{Fit, LeastSquares};
+pub use surface::{Derivative, Surface};
