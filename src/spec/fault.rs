@@ -47,3 +47,49 @@ impl fmt::Display for Fault {
         Ok(())
     }
 }
+
+/// The start of a typed text, on one line and short enough for a message.
+pub(super) fn excerpt(text: &str) -> String {
+    const LONGEST: usize = 60;
+    let mut short: String = text.lines().next().unwrap_or("").chars().take(LONGEST).collect();
+    if short.len() < text.len() {
+        short.push('…');
+    }
+    short
+        .chars()
+        .flat_map(|c| {
+            if c.is_control() {
+                c.escape_default().collect()
+            } else {
+                vec![c]
+            }
+        })
+        .collect()
+}
+
+/// Puts faults in the order of the file: by line, then those without a line, then those of `--set`.
+pub fn sort_faults(faults: &mut [Fault]) {
+    faults.sort_by_key(|fault| fault.place.rank());
+}
+
+impl Place {
+    /// What `file` says for a value that was typed on the command line.
+    pub const SET: &'static str = "--set";
+
+    /// Later places have higher ranks: by line, then those without a line, then `--set`.
+    pub(super) fn rank(&self) -> (bool, usize) {
+        (
+            self.file == Self::SET,
+            if self.line == 0 { usize::MAX } else { self.line },
+        )
+    }
+
+    /// How another message refers to this place: `line 3` or `--set`.
+    pub(super) fn short(&self) -> String {
+        if self.line > 0 {
+            format!("line {}", self.line)
+        } else {
+            self.file.clone()
+        }
+    }
+}

@@ -3,10 +3,24 @@
 //! [`read`] takes the text and gives a [`Reading`]: the resolved [`Spec`], or every [`Fault`] of the file at once.
 //! All lengths here are millimetres, all angles radians (see the crate's conventions).
 
+mod document;
 mod fault;
+mod keys;
+mod panels;
+mod planform;
+mod quantity;
+mod reading;
+mod resolve;
+mod sizes;
+#[cfg(test)]
+mod tests;
 mod unit;
+mod unknown;
+mod written;
 
-pub use fault::{Fault, Place};
+pub use fault::{Fault, Place, sort_faults};
+pub use keys::keys;
+pub use reading::{Reading, Source, read, starter};
 pub use unit::Unit;
 
 /// A wing of which every number is known: what the file means, whatever way it was written.

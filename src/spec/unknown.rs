@@ -1,0 +1,94 @@
+//! Finds keys and tables that a spec does not have.
+
+use super::document::{Node, Value};
+use super::fault::{Fault, excerpt};
+use super::keys::{self, Table};
+use super::quantity::all_of;
+use super::written::TABLES;
+
+/// A fault for every key and table of the document that is not known, naming the nearest that is.
+pub(super) fn unknown_keys(root: &Node) -> Vec<Fault> {
+    let mut faults = Vec::new();
+    let top = TABLES
+        .iter()
+        .find(|table| table.name.is_empty())
+        .expect("the top level is in the list");
+    let Value::Table(members) = &root.value else {
+        return faults;
+    };
+    for (name, node) in members {
+        match keys::table(name).filter(|table| !table.name.is_empty()) {
+            Some(table) => check_table(node, table, &mut faults),
+            None if keys::key(top, name).is_some() => {}
+            None => faults.push(fault(node, top, name)),
+        }
+    }
+    faults
+}
+
+/// True where a table is no table or has an unknown key, which may be a known one misspelt.
+pub(super) fn hides_something(root: &Node, table: &str) -> bool {
+    let known = keys::table(table).expect("the caller names a table of the list");
+    root.member(table).is_some_and(|node| match &node.value {
+        Value::Table(members) => members.keys().any(|name| keys::key(known, name).is_none()),
+        _ => true,
+    })
+}
+
+fn check_table(node: &Node, table: &Table, faults: &mut Vec<Fault>) {
+    match &node.value {
+        Value::Table(members) => {
+            let unknown = members
+                .iter()
+                .filter(|(name, _)| keys::key(table, name).is_none());
+            faults.extend(unknown.map(|(name, node)| fault(node, table, name)));
+        }
+        // the reader reports a list in the place of a table
+        Value::List(items) if table.many => {
+            for item in items.iter().filter(|item| matches!(item.value, Value::Table(_))) {
+                check_table(item, table, faults);
+            }
+        }
+        _ => {}
+    }
+}
+
+fn fault(node: &Node, table: &Table, name: &str) -> Fault {
+    let what = if matches!(node.value, Value::Table(_)) {
+        "table"
+    } else {
+        "key"
+    };
+    let remedy = match keys::nearest(table.name, name) {
+        Some(near) => format!("The nearest known is {near}."),
+        None if table.name.is_empty() => {
+            let names: Vec<_> = TABLES
+                .iter()
+                .map(|t| t.name)
+                .filter(|name| !name.is_empty())
+                .collect();
+            format!(
+                "The tables are {}; above them stand name and unit.",
+                all_of(&names)
+            )
+        }
+        None => {
+            let names: Vec<_> = table.keys.iter().map(|key| key.name).collect();
+            format!("The keys of {} are {}.", table.name, all_of(&names))
+        }
+    };
+    // a table's text is its header, which says no more than its key
+    let text = if what == "table" {
+        String::new()
+    } else {
+        node.text.clone()
+    };
+    let mut place = node.place.clone();
+    place.key = excerpt(&place.key);
+    Fault {
+        place,
+        text,
+        problem: format!("unknown {what}"),
+        remedy,
+    }
+}

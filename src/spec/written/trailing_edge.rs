@@ -1,0 +1,25 @@
+//! `[trailing_edge]`: how thick the trailing edge is built.
+
+use super::{Entry, Section};
+use crate::spec::keys::{Key, Range, Table};
+use crate::spec::quantity::Dimension::Length;
+
+pub(super) const TABLE: Table = Table {
+    name: "trailing_edge",
+    many: false,
+    keys: &[Key::detail("thickness", Length, Range::THICKNESS)],
+};
+
+/// The table `[trailing_edge]`.
+#[derive(Debug)]
+pub(in crate::spec) struct TrailingEdge {
+    pub(in crate::spec) thickness: Entry<f64>,
+}
+
+impl TrailingEdge {
+    pub(super) fn read(section: &mut Section<'_>) -> Self {
+        Self {
+            thickness: section.number("thickness"),
+        }
+    }
+}
