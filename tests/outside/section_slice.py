@@ -47,7 +47,7 @@ def curves_of_cut(solid, axis, position):
 
 
 def corners_of(curves, near=1e-5):
-    """Ends of the curves [mm], those that coincide as one, and without the ends at which a smooth skin goes on."""
+    """Ends of the curves [mm], those that coincide as one, foremost first."""
     ends = []
     for curve in curves:
         for end in (curve[0], curve[-1]):
