@@ -31,3 +31,5 @@ pub mod solid;
 pub mod mesh;
 
 pub mod measure;
+
+pub mod write;

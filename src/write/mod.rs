@@ -1,0 +1,3 @@
+//! Writers: a value in, bytes out. They know no flags, paths, terminals or clocks.
+
+pub mod step;
