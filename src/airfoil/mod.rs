@@ -3,6 +3,7 @@
 //! A [`Section`] is exact: a formula, or a smooth curve through the points of a file. [`fit`] puts all sections of a
 //! wing on shared knots.
 
+pub mod coordinates;
 mod designation;
 mod fit;
 mod formula;
