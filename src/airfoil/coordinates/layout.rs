@@ -125,17 +125,18 @@ fn lead(rows: &[Row<'_>], columns: usize, titled: bool, lines: &[Line<'_>]) -> R
         let whole = |v: f64| v.fract().abs() <= 0.0 && (1.0..1e6).contains(&v);
         if let Some([a, b]) = row.pair().filter(|&[a, b]| whole(a) && whole(b)) {
             let sum = a + b;
-            if (sum - rest as f64).abs() < 0.5 && a.min(b) >= 3.0 {
+            let padded = row.numbers.iter().any(|n| n.padded);
+            if (sum - rest as f64).abs() < 0.5 && a.min(b) >= 3.0 && !padded {
                 let split = rows[i + 1..].iter().zip(1_usize..).take_while(|&(_, k)| k as f64 <= a).count();
                 return Ok(Lead { start: i + 1, counted: Some((split, row.line)), ..lead });
             }
-            if columns == 2 && begins(&rows[i..]) {
+            if columns == 2 && begins(&rows[i..]) && !(typed_apart(&rows[i..]) && b > 0.0) {
                 return Ok(lead);
             }
             // not the title when a title stands before it, or when it is near what the file holds
             let near = sum > 0.5 * rest as f64 && sum < 2.0 * rest as f64 && a.min(b) > 0.3 * a.max(b);
             let after_title = titled || !lead.titles.is_empty();
-            if near || (after_title && a.min(b) >= MIN_SIDE as f64 && a.max(b) < 1000.0) {
+            if !padded && (near || after_title && a.min(b) >= MIN_SIDE as f64 && a.max(b) < 1000.0) {
                 let found = format!("{rest} points follow");
                 return Err(Error::Counts { at: place(lines, row.line), found });
             }
@@ -149,6 +150,13 @@ fn lead(rows: &[Row<'_>], columns: usize, titled: bool, lines: &[Line<'_>]) -> R
         lead.start = i + 1;
     }
     Ok(lead)
+}
+
+/// Whether the first row is typed in whole numbers, and nearly all that follow the header are not.
+fn typed_apart(rows: &[Row<'_>]) -> bool {
+    let whole = |row: &Row<'_>| row.numbers.iter().all(|n| n.whole);
+    let rest = rows.get(4..).unwrap_or(&[]);
+    whole(&rows[0]) && 10 * rest.iter().filter(|&row| whole(row)).count() < rest.len()
 }
 
 /// Whether the first row can be the first point of a section that the rest describes: it lies near an end of the

@@ -9,6 +9,8 @@ pub(super) struct Number {
     pub(super) decimals: i32,
     /// Whether it was typed as a whole number, without point, comma or exponent.
     pub(super) whole: bool,
+    /// Whether it begins with a zero that a number does not need: `0012`.
+    pub(super) padded: bool,
 }
 
 /// Whether the file's numbers have decimal commas: then more of its lines read as two, three or four numbers with
@@ -99,6 +101,7 @@ fn number(token: &str, comma: bool) -> Option<Number> {
         value,
         decimals: fraction.unwrap_or(0) - power.unwrap_or(0),
         whole: fraction.is_none() && power.is_none(),
+        padded: text.len() > 1 && text.starts_with('0') && text.as_bytes()[1].is_ascii_digit(),
     })
 }
 
@@ -107,5 +110,5 @@ fn not_finite(token: &str) -> Option<Number> {
     let bare = token.trim_start_matches(['+', '-']).to_ascii_lowercase();
     let known = matches!(bare.as_str(), "nan" | "inf" | "infinity" | "1.#inf" | "1.#ind" | "1.#qnan" | "nanq")
         || (bare.len() > 2 && bare.bytes().all(|b| b == b'*'));
-    known.then_some(Number { value: f64::NAN, decimals: 0, whole: false })
+    known.then_some(Number { value: f64::NAN, decimals: 0, whole: false, padded: false })
 }

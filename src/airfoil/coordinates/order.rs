@@ -187,6 +187,7 @@ fn join(one: &[Point], two: &[Point], lines: &[Line<'_>], notes: &mut Vec<String
     } else {
         second.reverse();
     }
+    check_gap(&run, &second, lines)?;
     if let (Some(&end), Some(&start)) = (run.last(), second.first())
         && same(end, start)
     {
@@ -195,6 +196,24 @@ fn join(one: &[Point], two: &[Point], lines: &[Line<'_>], notes: &mut Vec<String
     }
     run.append(&mut second);
     Ok(run)
+}
+
+/// Where `one` ends and `two` begins, at the nose, there is no gap much wider than the steps beside it.
+fn check_gap(one: &[Point], two: &[Point], lines: &[Line<'_>]) -> Result<(), Error> {
+    let (Some(&a), Some(&c)) = (one.last(), two.first()) else { return Ok(()) };
+    let gap = distance(a, c);
+    let behind = smaller(&mut one.windows(2).rev().map(|w| distance(w[0], w[1])));
+    let ahead = smaller(&mut two.windows(2).map(|w| distance(w[0], w[1])));
+    if gap > 3.0 * behind.max(ahead) {
+        let why = format!("a gap at the nose between this line and line {}: points are missing", c.line);
+        return Err(not_one(lines, a, why));
+    }
+    Ok(())
+}
+
+/// The smaller of the first two steps; the first alone may come from a spoiled row. Repeated points do not count.
+fn smaller(steps: &mut dyn Iterator<Item = f64>) -> f64 {
+    steps.filter(|&d| d > 0.0).take(2).fold(f64::INFINITY, f64::min)
 }
 
 /// A single run around the section from the trailing edge, or from the nose.
@@ -206,6 +225,7 @@ fn around(points: &[Point], lines: &[Line<'_>], notes: &mut Vec<String>) -> Resu
         return Ok(points.to_vec());
     }
     notes.push(format!("Layout: one loop from the nose, {} points.", points.len()));
+    check_gap(points, points, lines)?;
     let along = [(points[k].at[0] - start.at[0]) / chord, (points[k].at[1] - start.at[1]) / chord];
     // the base of a blunt trailing edge, or two points given for a sharp one: the steepest step next to the far end
     let across = |i: usize| {
