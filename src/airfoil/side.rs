@@ -177,11 +177,7 @@ impl Side {
             .filter_map(|&sigma| {
                 // σₙ (1 - s)² + σₜ s = σ
                 let (a, b, c) = (self.nose, self.tail - 2.0 * self.nose, self.nose - sigma);
-                let s = if a == 0.0 {
-                    -c / b
-                } else {
-                    (-b + b.signum() * (b * b - 4.0 * a * c).sqrt()) / (2.0 * a)
-                };
+                let s = -2.0 * c / (b + b.signum() * (b * b - 4.0 * a * c).sqrt());
                 (s > 1e-3 && s < 1.0 - 1e-3).then_some(s)
             })
             .collect();
