@@ -182,6 +182,9 @@ fn join(path: &str, name: &str) -> String {
     }
 }
 
+/// How many parts the longest dotted key has, as in `panel.0.sweep`.
+const DEEPEST: usize = 3;
+
 /// Puts a `--set` value into the tree: overrides, or adds.
 ///
 /// # Errors
@@ -207,6 +210,12 @@ pub(super) fn set(root: &mut Node, key: &str, value: &str) -> Result<(), Box<Fau
         return Err(fault(
             "the key is not complete".to_owned(),
             "Write --set KEY=VALUE with a dotted key, such as planform.taper_ratio=0.5 or panel.0.sweep=3.",
+        ));
+    }
+    if parts.len() > DEEPEST {
+        return Err(fault(
+            "no key has so many parts".to_owned(),
+            "The longest are like panel.0.sweep.",
         ));
     }
     let mut node = root;

@@ -105,7 +105,7 @@ pub(super) fn folds(panels: &[written::Panel]) -> Vec<Fault> {
                     "the panel folds back: its dihedral differs by {} deg from the panel before; allowed: less than 90 deg",
                     super::quantity::significant(turn.abs())
                 ),
-                remedy: "Put a panel of a dihedral in between.".to_owned(),
+                remedy: "Put a panel with a dihedral in between before it.".to_owned(),
             });
         }
     }

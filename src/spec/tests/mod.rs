@@ -1,6 +1,7 @@
 //! Specs as a user types them, read from beginning to end.
 
 mod accepted;
+mod contradictions;
 mod faults;
 mod random;
 mod set;
@@ -35,6 +36,14 @@ fn spec(text: &str) -> Spec {
 /// The faults of a text, as the user sees them.
 fn faults(text: &str) -> Vec<String> {
     messages(&reading(text))
+}
+
+/// The only fault of a text.
+#[track_caller]
+fn only(text: &str) -> String {
+    let faults = faults(text);
+    assert_eq!(faults.len(), 1, "{faults:#?}");
+    faults[0].clone()
 }
 
 fn messages(reading: &Reading) -> Vec<String> {
