@@ -21,6 +21,11 @@ pub(super) struct Node {
 }
 
 impl Node {
+    /// True for an empty table or list that a `--set` made on its way to a place that does not exist; it has a fault.
+    pub(super) fn is_left_by_failed_set(&self) -> bool {
+        self.place.file == Place::SET && self.text.is_empty()
+    }
+
     /// The value under a name, if this is a table.
     pub(super) fn member(&self, name: &str) -> Option<&Self> {
         match &self.value {

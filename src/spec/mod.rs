@@ -20,6 +20,7 @@ mod written;
 
 pub use fault::{Fault, Place, sort_faults};
 pub use keys::keys;
+pub use panels::ReferencePlane;
 pub use reading::{Reading, Source, read, starter};
 pub use unit::Unit;
 

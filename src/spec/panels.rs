@@ -2,7 +2,7 @@
 
 use super::fault::Fault;
 use super::written::{self, Entry};
-use super::{AirfoilSource, Panel};
+use super::{AirfoilSource, Panel, Spec};
 
 /// Dihedral of the first panel beyond which the whole surface is a fin \[rad\]: 60°.
 pub(super) const FIN: f64 = 60.0 * std::f64::consts::PI / 180.0;
@@ -13,7 +13,7 @@ pub(super) const FIN: f64 = 60.0 * std::f64::consts::PI / 180.0;
 /// a panel counts with the sine of its dihedral instead of the cosine. Span and area still count two sides, as they do
 /// where only one side of a wing is built: a fin of height h has the span 2 h.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub(super) enum ReferencePlane {
+pub enum ReferencePlane {
     /// x-y.
     Level,
     /// x-z.
@@ -22,7 +22,7 @@ pub(super) enum ReferencePlane {
 
 impl ReferencePlane {
     /// The plane of a surface of which the first panel has this dihedral \[rad\].
-    pub(super) fn of(first_dihedral: f64) -> Self {
+    pub fn of(first_dihedral: f64) -> Self {
         if first_dihedral.abs() > FIN + 1e-12 {
             Self::Upright
         } else {
@@ -31,11 +31,18 @@ impl ReferencePlane {
     }
 
     /// How much of a panel's length counts as semispan \[-\].
-    pub(super) fn projection(self, dihedral: f64) -> f64 {
+    pub fn projection(self, dihedral: f64) -> f64 {
         match self {
             Self::Level => dihedral.cos(),
             Self::Upright => dihedral.abs().sin(),
         }
+    }
+}
+
+impl Spec {
+    /// The plane that span and area are taken in.
+    pub fn reference_plane(&self) -> ReferencePlane {
+        ReferencePlane::of(self.panels.first().map_or(0.0, |panel| panel.dihedral))
     }
 }
 

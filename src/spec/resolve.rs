@@ -43,6 +43,7 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
     let root_airfoil = match &written.airfoil.root {
         Entry::Given(given) => Some(airfoil_source(given)),
         Entry::Unreadable => None,
+        Entry::Absent if unknown::hides_something(root, "airfoil") => None,
         Entry::Absent => {
             faults.push(Fault {
                 place: Place {

@@ -146,7 +146,7 @@ impl Relations {
         });
     }
 
-    /// Everything that follows from `known`.
+    /// Everything that follows from `known`; may be negative or not finite where no wing has these sizes.
     pub(super) fn follow(&self, known: Values) -> Values {
         let mut known = known;
         loop {
@@ -156,9 +156,7 @@ impl Relations {
                 .filter(|rule| known.get(rule.gives).is_none())
                 .find_map(|rule| {
                     let inputs: Option<Vec<f64>> = rule.from.iter().map(|&size| known.get(size)).collect();
-                    inputs
-                        .map(|inputs| (rule.gives, (rule.by)(&inputs)))
-                        .filter(|(_, value)| value.is_finite())
+                    inputs.map(|inputs| (rule.gives, (rule.by)(&inputs)))
                 });
             match new {
                 Some((size, value)) => known.set(size, value),

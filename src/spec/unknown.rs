@@ -26,13 +26,22 @@ pub(super) fn unknown_keys(root: &Node) -> Vec<Fault> {
     faults
 }
 
-/// True where a table is no table or has an unknown key, which may be a known one misspelt.
+/// True where keys of a table may be hidden by a misspelling: the table is no table or has an unknown key, or an unknown
+/// key or table of the top level is nearest to it.
 pub(super) fn hides_something(root: &Node, table: &str) -> bool {
     let known = keys::table(table).expect("the caller names a table of the list");
-    root.member(table).is_some_and(|node| match &node.value {
+    let inside = root.member(table).is_some_and(|node| match &node.value {
         Value::Table(members) => members.keys().any(|name| keys::key(known, name).is_none()),
         _ => true,
-    })
+    });
+    let Value::Table(members) = &root.value else {
+        return inside;
+    };
+    let mut unknown = members.keys().filter(|name| keys::table(name).is_none());
+    let near = |near: String| {
+        near == format!("[{table}]") || near.strip_prefix(table).is_some_and(|rest| rest.starts_with('.'))
+    };
+    inside || unknown.any(|name| keys::nearest("", name).is_some_and(near))
 }
 
 fn check_table(node: &Node, table: &Table, faults: &mut Vec<Fault>) {

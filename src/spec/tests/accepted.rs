@@ -57,6 +57,22 @@ fn area_aspect_ratio_and_taper_settle_a_wing() {
 }
 
 #[test]
+fn onera_m6_from_its_report() {
+    // AGARD AR-138, chapter B1: A 3.8, taper 0.562, semispan 1.1963 m; half area 0.7532 m² as printed
+    let lines = "span = \"2.3926 m\"\naspect_ratio = 3.8\ntaper_ratio = 0.562\narea = \"1.5064 m^2\"";
+    let spec = spec(&planform(lines));
+    let (root, tip, semispan) = (spec.root_chord, spec.panels[0].tip_chord, spec.panels[0].span);
+    near(0.5 * semispan * (root + tip), 753_200.0, 1e-4);
+    // MAC = 2/3 c_r (1 + λ + λ²) / (1 + λ): 0.64607 m as printed
+    let taper: f64 = tip / root;
+    near(
+        2.0 / 3.0 * root * (1.0 + taper + taper * taper) / (1.0 + taper),
+        646.07,
+        1e-4,
+    );
+}
+
+#[test]
 fn defaults() {
     let spec = spec(&planform("span = 2000\nroot_chord = 300\ntip_chord = 200"));
     assert_eq!((spec.name.as_str(), spec.unit), ("wing", Unit::Millimetre));

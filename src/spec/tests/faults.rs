@@ -246,6 +246,22 @@ fn unknown_keys_and_tables() {
 }
 
 #[test]
+fn what_a_misspelling_hides_is_not_missing() {
+    let text = planform(WING);
+    for (typed, misspelt) in [
+        ("[planform]", "[plan_form]"),
+        ("[airfoil]", "[aerofoil]"),
+        ("root =", "roots ="),
+    ] {
+        let message = only(&text.replacen(typed, misspelt, 1));
+        assert!(message.contains("unknown"), "{message}");
+    }
+    assert!(
+        only("span = 2000\n[airfoil]\nroot = \"NACA 0012\"").contains("The nearest known is planform.span.")
+    );
+}
+
+#[test]
 fn text_that_is_not_toml() {
     for (text, start) in [
         ("[airfoil]\nroot = NACA 2412\n", "wing.toml:2: not valid TOML: "),

@@ -21,6 +21,16 @@ fn sizes(span: f64, root: f64, taper: f64) -> [(&'static str, f64); 7] {
     ]
 }
 
+const KEYS: [&str; 7] = [
+    "span",
+    "area",
+    "aspect_ratio",
+    "mean_chord",
+    "root_chord",
+    "taper_ratio",
+    "tip_chord",
+];
+
 fn wing() -> impl Strategy<Value = [(&'static str, f64); 7]> {
     (1000.0..20_000.0, 0.05..0.3, 0.2..1.5)
         .prop_map(|(span, slender, taper)| sizes(span, slender * span, taper))
@@ -99,6 +109,61 @@ proptest! {
             for fault in &faults {
                 prop_assert!(fault.problem.starts_with("contradicts "), "{fault}");
                 prop_assert!(fault.to_string().contains(some[wrong].0) || faults.len() > 1, "{fault}");
+            }
+        }
+    }
+
+    #[test]
+    fn any_numbers_are_a_wing_or_have_a_fault(
+        numbers in proptest::collection::vec((0_usize..7, any::<f64>()), 0..6),
+        panels in proptest::collection::vec((any::<f64>(), any::<f64>(), -100.0..100.0), 0..4),
+    ) {
+        let set: Vec<_> = numbers.iter().map(|&(key, value)| (format!("planform.{}", KEYS[key]), format!("{value:e}"))).collect();
+        let set: Vec<_> = set.iter().map(|(key, value)| (key.as_str(), value.as_str())).collect();
+        let panels: String = panels
+            .iter()
+            .map(|(span, chord, dihedral)| format!("[[panel]]\nspan={span:?}\ntip_chord={chord:?}\ndihedral={dihedral:?}\n"))
+            .collect();
+        for text in [planform(""), planform(&panels)] {
+            let reading = reading_with(&text, &set);
+            prop_assert_eq!(reading.spec.is_none(), !reading.faults.is_empty());
+        }
+    }
+
+    #[test]
+    fn tiny_and_huge_sizes_are_a_wing_or_have_a_fault(powers in proptest::collection::vec(-320..13, 7), some in 0_usize..128) {
+        let lines: String = (0..7).filter(|i| some >> i & 1 == 1).map(|i| format!("{} = 1e{}\n", KEYS[i], powers[i])).collect();
+        let panel = format!("[[panel]]\nspan = 1e{}\ntip_chord = 1\n", powers[0]);
+        for text in [planform(&lines), format!("{}{panel}", planform(&lines))] {
+            let reading = reading(&text);
+            prop_assert_eq!(reading.spec.is_none(), !reading.faults.is_empty(), "{}", text);
+        }
+    }
+
+    #[test]
+    fn panels_have_the_same_root_chord_whatever_size_it_follows_from(
+        root in 50.0..500.0_f64,
+        panels in proptest::collection::vec((100.0..2000.0_f64, 50.0..500.0_f64, -44.0..44.0_f64), 1..6),
+    ) {
+        let mut inner = root;
+        let (mut span, mut area) = (0.0, 0.0);
+        let mut text = String::new();
+        for (length, chord, dihedral) in panels {
+            let across = 2.0 * length * dihedral.to_radians().cos();
+            span += across;
+            area += 0.5 * across * (inner + chord);
+            inner = chord;
+            text += &format!("[[panel]]\nspan = {length:?}\ntip_chord = {chord:?}\ndihedral = {dihedral:?}\n");
+        }
+        let mean = area / span;
+        for (key, value) in [("root_chord", root), ("area", area), ("mean_chord", mean), ("aspect_ratio", span / mean)] {
+            let reading = reading(&format!("{}{text}", planform(&format!("span = {span:?}\n{key} = {value:?}\n"))));
+            // slender wings have aspect ratios that are out of range
+            if let Some(spec) = &reading.spec {
+                // a first panel that is a small part of the wing leaves the root chord to a small difference
+                prop_assert!((spec.root_chord - root).abs() < 1e-9 * root, "{} {root}", spec.root_chord);
+            } else {
+                prop_assert!(span / mean > 99.0, "{:?}", reading.faults);
             }
         }
     }

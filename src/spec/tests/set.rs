@@ -64,6 +64,7 @@ fn the_last_of_a_key_counts() {
 #[test]
 fn faults_say_where_they_come_from() {
     for (key, value, start) in [
+        ("panel", "[]", "--set: panel = []: at least one panel is needed"),
         (
             "planform.sweep",
             "95",

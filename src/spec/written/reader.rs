@@ -136,8 +136,7 @@ impl Reader {
                 return Vec::new();
             }
         };
-        // an empty list of --set already has its own fault
-        if items.is_empty() && node.is_some_and(|node| node.place.file != Place::SET) {
+        if items.is_empty() && !node.is_some_and(Node::is_left_by_failed_set) {
             self.fault(node, format!("at least one {} is needed", table.name), remedy);
             return Vec::new();
         }
