@@ -33,3 +33,7 @@ pub mod mesh;
 pub mod measure;
 
 pub mod write;
+
+pub mod wing;
+
+pub mod cli;

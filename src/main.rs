@@ -1,3 +1,7 @@
 //! The command line of spanwise.
 
-fn main() {}
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
+    spanwise::cli::run(std::env::args_os())
+}

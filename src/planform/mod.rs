@@ -14,7 +14,7 @@ pub use station::Station;
 
 use nalgebra::Point3;
 
-use crate::spec::{IncidenceAt, Panel, Spec};
+use crate::spec::{IncidenceAt, ReferencePlane, Spec};
 use station::lay_out;
 
 /// A wing laid out: where every section stands, and the reference wing's figures.
@@ -111,7 +111,7 @@ impl Planform {
     /// Lays out a spec: stations, reference figures, and the root incidence that gives the section at the mean
     /// aerodynamic chord the incidence asked for.
     pub fn of(spec: &Spec) -> Self {
-        let fin = spec.panels[0].dihedral.abs() > Panel::FIN + 1e-12;
+        let fin = spec.reference_plane() == ReferencePlane::Upright;
         let (mut stations, panels) = lay_out(spec, fin);
         let integrals = Integrals::of(&stations, &panels);
         let place = integrals.place(&panels);

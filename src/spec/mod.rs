@@ -75,9 +75,6 @@ impl Panel {
     /// Dihedral beyond which a panel carries its sections square to itself instead of upright \[rad\]: 30°.
     pub const STEEP: f64 = 30.0 * std::f64::consts::PI / 180.0;
 
-    /// Dihedral of the root panel beyond which the surface is a fin: its reference plane is x-z \[rad\]: 60°.
-    pub const FIN: f64 = 60.0 * std::f64::consts::PI / 180.0;
-
     /// True where the panel's dihedral is beyond 30°: its sections stand square to the panel, and its sweep is
     /// measured in its own plane.
     pub fn is_steep(&self) -> bool {

@@ -1,0 +1,50 @@
+//! The command line: arguments, disk, terminal, clock.
+
+mod args;
+mod begin;
+mod failure;
+mod loft;
+mod output;
+mod stamp;
+
+use std::ffi::OsString;
+use std::process::ExitCode;
+
+use clap::Parser;
+
+use args::{Arguments, Command};
+use output::Output;
+
+/// Exit code where something asked for is out of tolerance.
+const OUT_OF_TOLERANCE: u8 = 1;
+/// Exit code for bad input, usage or files.
+const BAD_INPUT: u8 = 2;
+
+/// Runs the program with its arguments (the first is its name) and returns its exit code: 0 done, 1 something asked for
+/// is out of tolerance, 2 bad input, usage or file.
+pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
+    let arguments = match Arguments::try_parse_from(arguments) {
+        Ok(arguments) => arguments,
+        Err(error) => {
+            // help and version are asked for and end well; usage errors go to standard error
+            let code = if error.use_stderr() { BAD_INPUT } else { 0 };
+            return match error.print() {
+                Ok(()) => ExitCode::from(code),
+                Err(_) => ExitCode::from(BAD_INPUT),
+            };
+        }
+    };
+    let output = Output { json: arguments.json, quiet: arguments.quiet };
+    let result = match &arguments.command {
+        Command::Begin => begin::run(&output),
+        Command::Loft(options) => loft::run(options, &output),
+    };
+    match result {
+        Ok(true) => ExitCode::SUCCESS,
+        Ok(false) => ExitCode::from(OUT_OF_TOLERANCE),
+        Err(failure) => {
+            output.complain(&failure);
+            ExitCode::from(BAD_INPUT)
+        }
+    }
+}

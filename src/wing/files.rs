@@ -1,0 +1,103 @@
+//! The files of a wing, as bytes.
+
+use super::{Error, Wing};
+use crate::write::step::{Attribute, Document, Properties, ReferenceForm, Schema, Value};
+use crate::write::{step, stl};
+
+/// A kind of file.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
+pub enum Kind {
+    /// The exact solid.
+    Step,
+    /// The facets.
+    Stl,
+    /// The figures.
+    Json,
+}
+
+impl Kind {
+    /// All kinds, in the order they are written.
+    pub const ALL: [Self; 3] = [Self::Step, Self::Stl, Self::Json];
+
+    /// Its name on the command line and in the figures; also the ending of its file's name.
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::Step => "step",
+            Self::Stl => "stl",
+            Self::Json => "json",
+        }
+    }
+}
+
+/// What the files' contents depend on beside the wing.
+#[derive(Clone, Copy, Debug)]
+pub struct Options<'a> {
+    /// Time stamp of the STEP file, ISO 8601 without zone.
+    pub time_stamp: &'a str,
+    /// Identifier of the part: the stem of the files' names.
+    pub id: &'a str,
+}
+
+impl Wing {
+    /// The STEP file.
+    ///
+    /// # Errors
+    ///
+    /// [`Error::Step`] where a text cannot be said in STEP.
+    pub fn step(&self, options: Options<'_>) -> Result<Vec<u8>, Error> {
+        let properties: Vec<Properties> = (self.figures.iter())
+            .map(|figures| Properties {
+                volume: figures.volume,
+                area: figures.surface_area,
+                centroid: figures.centroid,
+                corners: [figures.least, figures.greatest],
+            })
+            .collect();
+        let attributes = self.attributes();
+        let document = Document {
+            id: options.id,
+            name: &self.spec.name,
+            description: "wing solid with its reference geometry, made by spanwise",
+            unit: self.spec.unit,
+            schema: Schema::default(),
+            reference_form: ReferenceForm::default(),
+            solids: &self.solids,
+            properties: &properties,
+            reference: &self.reference,
+            attributes: &attributes,
+            time_stamp: options.time_stamp,
+        };
+        let mut bytes = Vec::with_capacity(1 << 16);
+        step::write(&document, &mut bytes)?;
+        Ok(bytes)
+    }
+
+    /// The STL file.
+    pub fn stl(&self) -> Vec<u8> {
+        let mut bytes = Vec::with_capacity(84 + 50 * self.mesh.facets.len());
+        stl::write(&self.mesh, self.spec.unit.millimetres(), &mut bytes).expect("a vector takes all bytes");
+        bytes
+    }
+
+    /// Figures that go into the STEP file as attributes.
+    fn attributes(&self) -> Vec<Attribute> {
+        let wing = &self.planform.wing;
+        let attribute = |name: &str, value: Value| Attribute { name: name.to_owned(), value };
+        let mut attributes = vec![
+            attribute("reference span", Value::Length(wing.span)),
+            attribute("reference area", Value::Area(wing.area)),
+            attribute("aspect ratio", Value::Ratio(wing.aspect_ratio())),
+            attribute("taper ratio", Value::Ratio(wing.taper_ratio())),
+            attribute("mean aerodynamic chord", Value::Length(wing.mac.length)),
+            attribute("incidence at the mean aerodynamic chord", Value::Angle(wing.mac.incidence)),
+            attribute("incidence at the root", Value::Angle(self.planform.stations[0].incidence)),
+            attribute("section fit deviation of the chord", Value::Ratio(self.section_deviation)),
+        ];
+        let airfoils = std::iter::once(&self.spec.root_airfoil).chain(self.spec.panels.iter().map(|p| &p.airfoil));
+        let mut texts: Vec<&str> = airfoils.map(|airfoil| airfoil.text.as_str()).collect();
+        texts.dedup();
+        let sections: String = texts.join(", ").chars().map(|c| if c.is_ascii_graphic() || c == ' ' { c } else { '?' }).collect();
+        attributes.push(attribute("sections from root to tip", Value::Text(sections)));
+        attributes
+    }
+}
