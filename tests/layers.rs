@@ -110,13 +110,17 @@ fn imports(tokens: &[Token], file_depth: usize) -> Vec<(usize, String)> {
     found
 }
 
-/// First names of the path or the group of paths that begins at `at`.
+/// First names of the path or the group of paths that begins at `at`; globs are not names.
 fn heads(tokens: &[Token], at: usize) -> Vec<(usize, String)> {
     let Some(first) = tokens.get(at) else {
         return Vec::new();
     };
     if first.text != "{" {
-        return vec![(first.line, first.text.clone())];
+        return if first.text == "*" {
+            Vec::new()
+        } else {
+            vec![(first.line, first.text.clone())]
+        };
     }
     let mut found = Vec::new();
     let mut depth = 0;
@@ -135,7 +139,9 @@ fn heads(tokens: &[Token], at: usize) -> Vec<(usize, String)> {
             }
             "," => expected = depth == 1,
             name if expected => {
-                found.push((token.line, name.to_owned()));
+                if name != "*" {
+                    found.push((token.line, name.to_owned()));
+                }
                 expected = false;
             }
             _ => {}

@@ -2,13 +2,16 @@
 
 // helpers
 mod figures; // numbers out of the program's JSON, and comparisons that say what they compared
+mod lofted; // the examples, each lofted once and read back
 mod python; // the readers from outside (Open CASCADE, trimesh) in a pinned environment under target/
+mod refusal; // sound specs to spoil, and the demands on every refusal
 mod source; // Rust source as tokens, for the test on the modules' order
 mod workdir; // a directory of its own for a run of the program
 
 // subjects
-mod bad_input; // what is refused, how it is said, and that nothing is left behind
-mod examples; // every example: lofted, then read back by programs that know nothing of this one
+mod bad_files; // missing, malformed and unwritable files, wrong usage: nothing is left behind
+mod bad_spec; // faults of a spec: what is said about them
+mod examples; // every example, as programs see it that know nothing of this one
 mod known_answers; // closed forms and published wings
 mod layers; // each module imports only from those before it
 mod own_sections; // the coordinate files are what their headers say
