@@ -151,14 +151,14 @@ fn the_mean_aerodynamic_chord_lies_where_the_figures_say() {
             ];
             let found = step.list("free_edges").into_iter().any(|edge| {
                 let (start, end) = (edge.point("start"), edge.point("end"));
-                let fits = |a, b| {
-                    // a steep panel's chord leans out of the upright plane: only its length is known here
-                    let far = if example.is_steep() {
-                        (distance(a, b) - length).abs()
+                let fits = |a: [f64; 3], b| {
+                    if example.is_steep() {
+                        // the chord may lean out of the upright plane: its y is not that of its place in the plan
+                        let aside = (a[0] - nose[0]).hypot(a[2] - nose[2]);
+                        aside <= 1e-5 && a[1] * sign >= -1e-5 && (distance(a, b) - length).abs() <= 1e-5
                     } else {
-                        distance(b, tail)
-                    };
-                    distance(a, nose) <= 1e-5 && far <= 1e-5
+                        distance(a, nose) <= 1e-5 && distance(b, tail) <= 1e-5
+                    }
                 };
                 fits(start, end) || fits(end, start)
             });

@@ -27,12 +27,12 @@ pub(crate) fn outside<S: AsRef<OsStr>>(script: &str, arguments: &[S]) -> Figures
         .join("tests")
         .join("outside");
     let mut command = Command::new(&*PYTHON);
-    // -B: no compiled files beside the scripts; -s: nothing from the user's own packages
     command
-        .args(["-B", "-s"])
         .arg(folder.join(script))
         .args(arguments)
         .env_remove("PYTHONPATH");
+    // no compiled files beside the scripts, nothing from the user's own packages; the scripts' children inherit both
+    command.envs([("PYTHONDONTWRITEBYTECODE", "1"), ("PYTHONNOUSERSITE", "1")]);
     let output = command
         .output()
         .unwrap_or_else(|fault| panic!("{}: {fault}", PYTHON.display()));
