@@ -106,21 +106,22 @@ fn step(what: &str, command: &mut Command) -> Result<(), String> {
 
 /// The interpreter on the path and its version.
 fn interpreter() -> Result<(String, String), String> {
+    let mut unfit = Vec::new();
     for name in ["python3", "python"] {
         let print = "import sys; print('%d.%d' % sys.version_info[:2])";
         let Ok(output) = Command::new(name).args(["-c", print]).output() else {
             continue;
         };
-        if !output.status.success() {
-            continue;
-        }
         let version = String::from_utf8_lossy(&output.stdout).trim().to_owned();
-        if !["3.11", "3.12", "3.13", "3.14"].contains(&version.as_str()) {
-            return Err(format!("`{name}` on the path is Python {version}."));
+        if output.status.success() && ["3.11", "3.12", "3.13", "3.14"].contains(&version.as_str()) {
+            return Ok((name.to_owned(), version));
         }
-        return Ok((name.to_owned(), version));
+        unfit.push(format!("`{name}` on the path is Python {version}."));
     }
-    Err("There is neither `python3` nor `python` on the path.".to_owned())
+    if unfit.is_empty() {
+        unfit.push("There is neither `python3` nor `python` on the path.".to_owned());
+    }
+    Err(unfit.join(" "))
 }
 
 /// True where an environment is there and its packages can be loaded.
