@@ -37,7 +37,9 @@ pub enum Error {
     #[error(transparent)]
     Coordinates(#[from] coordinates::Error),
     /// No smooth curve passes the file's points closely enough.
-    #[error("{name}: no smooth curve passes all its points within 1e-5 of the chord; check for a point out of line")]
+    #[error(
+        "{name}: no smooth curve passes all its points within 1e-5 of the chord; check for a point out of line"
+    )]
     Rough {
         /// The section.
         name: String,
@@ -84,7 +86,12 @@ impl Section {
         if !apart {
             return Err(crosses());
         }
-        Ok(Self { name: name.to_owned(), deviation: 0.0, upper, lower })
+        Ok(Self {
+            name: name.to_owned(),
+            deviation: 0.0,
+            upper,
+            lower,
+        })
     }
 
     /// The section through the points of a coordinate file.
@@ -93,9 +100,20 @@ impl Section {
     ///
     /// [`Error::Rough`] where no smooth curve passes all points within 1e-5 of the chord.
     pub fn from_contour(name: &str, contour: &coordinates::Contour) -> Result<Self, Error> {
-        let smooth = points::smooth(contour).ok_or_else(|| Error::Rough { name: name.to_owned() })?;
-        let points::Smooth { upper, lower, deviation } = smooth;
-        Ok(Self { name: name.to_owned(), deviation, upper, lower })
+        let smooth = points::smooth(contour).ok_or_else(|| Error::Rough {
+            name: name.to_owned(),
+        })?;
+        let points::Smooth {
+            upper,
+            lower,
+            deviation,
+        } = smooth;
+        Ok(Self {
+            name: name.to_owned(),
+            deviation,
+            upper,
+            lower,
+        })
     }
 }
 
@@ -113,7 +131,15 @@ mod tests {
             let section = Section::from_contour("file", &contour).unwrap();
             let smooth = start.elapsed();
             let profiles = fit(&[&section], TOLERANCE).unwrap();
-            println!("{path:?}: {} points, {:.2e}, {} + {} control points, {:.2e}; {read:?} {smooth:?} {:?}", contour.points.len(), section.deviation, profiles.upper.count(), profiles.lower.count(), profiles.deviation, start.elapsed());
+            println!(
+                "{path:?}: {} points, {:.2e}, {} + {} control points, {:.2e}; {read:?} {smooth:?} {:?}",
+                contour.points.len(),
+                section.deviation,
+                profiles.upper.count(),
+                profiles.lower.count(),
+                profiles.deviation,
+                start.elapsed()
+            );
             assert!(section.deviation <= TOLERANCE && profiles.deviation <= TOLERANCE);
         }
     }

@@ -30,7 +30,10 @@ pub(super) fn smooth(contour: &Contour) -> Option<Smooth> {
     let tolerance = (0.75 * 10.0_f64.powi(-decimals)).clamp(BEST, WORST);
     let (knots, fit) = fit(&data, tolerance)?;
     let deviation = worst(&fit);
-    let function = Function { knots, coefficients: fit.function.coefficients };
+    let function = Function {
+        knots,
+        coefficients: fit.function.coefficients,
+    };
     let (low, high) = (data[0].sigma, data[data.len() - 1].sigma);
     // the nose is where the curve itself meets the chord line; x is counted from there
     let mut nose = foremost.chord_line_sigma();
@@ -45,7 +48,11 @@ pub(super) fn smooth(contour: &Contour) -> Option<Smooth> {
     }
     let upper = Side::of_spline(function.clone(), least, nose, high);
     let lower = Side::of_spline(function, least, nose, low);
-    Some(Smooth { upper, lower, deviation })
+    Some(Smooth {
+        upper,
+        lower,
+        deviation,
+    })
 }
 
 /// The foremost point of the smooth contour.
@@ -68,7 +75,10 @@ impl Foremost {
         let at = |s: f64| -> [f64; 2] {
             let mut sum = [0.0; 2];
             for i in 0..5 {
-                let weight: f64 = (0..5).filter(|j| *j != i).map(|j| (s - t[j]) / (t[i] - t[j])).product();
+                let weight: f64 = (0..5)
+                    .filter(|j| *j != i)
+                    .map(|j| (s - t[j]) / (t[i] - t[j]))
+                    .product();
                 sum[0] += weight * near[i][0];
                 sum[1] += weight * near[i][1];
             }

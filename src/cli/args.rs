@@ -54,5 +54,8 @@ fn setting(text: &str) -> Result<(String, String), String> {
 
 fn kind(text: &str) -> Result<Kind, String> {
     let known = || Kind::ALL.map(Kind::name).join(", ");
-    Kind::ALL.into_iter().find(|kind| kind.name() == text).ok_or_else(|| format!("choose from {}", known()))
+    Kind::ALL
+        .into_iter()
+        .find(|kind| kind.name() == text)
+        .ok_or_else(|| format!("choose from {}", known()))
 }

@@ -20,34 +20,58 @@ pub(super) fn run(options: &LoftOptions, output: &Output) -> Result<bool, Failur
     let path = &options.spec;
     let text = read_text(path)?;
     let file = path.display().to_string();
-    let source = Source { text: &text, file: &file, set: &options.set };
+    let source = Source {
+        text: &text,
+        file: &file,
+        set: &options.set,
+    };
     let directory = path.parent().unwrap_or(Path::new(""));
-    let prepared =
-        prepare(&source, &|name| std::fs::read(directory.join(name))).map_err(Failure::Faults)?;
-    let broken = |source| Failure::Wing { path: path.clone(), source };
+    let prepared = prepare(&source, &|name| std::fs::read(directory.join(name))).map_err(Failure::Faults)?;
+    let broken = |source| Failure::Wing {
+        path: path.clone(),
+        source,
+    };
     let wing = Wing::build(&prepared).map_err(broken)?;
-    let stem = path.file_stem().map_or_else(|| "wing".into(), |stem| stem.to_string_lossy());
-    let kinds: Vec<Kind> =
-        Kind::ALL.into_iter().filter(|kind| options.only.is_empty() || options.only.contains(kind)).collect();
-    let name = |kind: &Kind| format!("{stem}.{}", kind.name());
-    let names: BTreeMap<String, String> = kinds.iter().map(|kind| (kind.name().to_owned(), name(kind))).collect();
+    let stem = path
+        .file_stem()
+        .map_or_else(|| "wing".into(), |stem| stem.to_string_lossy());
+    let kinds: Vec<Kind> = Kind::ALL
+        .into_iter()
+        .filter(|kind| options.only.is_empty() || options.only.contains(kind))
+        .collect();
+    let names: BTreeMap<String, String> = kinds.iter().flat_map(|kind| wing.names(*kind, &stem)).collect();
     let record = wing.record(names);
     let mut files = Files::open(&options.output)?;
     for kind in &kinds {
-        let bytes = match kind {
-            Kind::Step => wing.step(Options { time_stamp: &stamp, id: &stem }).map_err(broken)?,
+        let contents = match kind {
+            Kind::Step => vec![
+                wing.step(Options {
+                    time_stamp: &stamp,
+                    id: &stem,
+                })
+                .map_err(broken)?,
+            ],
             Kind::Stl => wing.stl(),
-            Kind::Json => record::json(&record).into_bytes(),
+            Kind::Json => vec![record::json(&record).into_bytes()],
         };
-        files.add(&name(kind), &bytes)?;
+        for ((_, name), bytes) in wing.names(*kind, &stem).iter().zip(contents) {
+            files.add(name, &bytes)?;
+        }
     }
     files.keep()?;
-    output.print(&if output.json { record::json(&record) } else { sheet::sheet(&record) })?;
+    output.print(&if output.json {
+        record::json(&record)
+    } else {
+        sheet::sheet(&record)
+    })?;
     Ok(wing.is_as_asked())
 }
 
 fn read_text(path: &Path) -> Result<String, Failure> {
-    let failure = |source| Failure::Read { path: path.to_path_buf(), source };
+    let failure = |source| Failure::Read {
+        path: path.to_path_buf(),
+        source,
+    };
     let size = std::fs::metadata(path).map_err(failure)?.len();
     if size > MOST_BYTES {
         let reason = format!("{size} bytes is no spec; the limit is {MOST_BYTES}");

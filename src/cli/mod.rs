@@ -34,7 +34,10 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
             };
         }
     };
-    let output = Output { json: arguments.json, quiet: arguments.quiet };
+    let output = Output {
+        json: arguments.json,
+        quiet: arguments.quiet,
+    };
     let result = match &arguments.command {
         Command::Begin => begin::run(&output),
         Command::Loft(options) => loft::run(options, &output),

@@ -55,18 +55,30 @@ impl Files {
                 break;
             }
         }
-        let files = Self { directory: directory.to_path_buf(), made, waiting: Vec::new() };
-        std::fs::create_dir_all(directory)
-            .map_err(|source| Failure::Write { path: directory.to_path_buf(), source })?;
+        let files = Self {
+            directory: directory.to_path_buf(),
+            made,
+            waiting: Vec::new(),
+        };
+        std::fs::create_dir_all(directory).map_err(|source| Failure::Write {
+            path: directory.to_path_buf(),
+            source,
+        })?;
         Ok(files)
     }
 
     /// Writes a file beside its final name.
     pub(super) fn add(&mut self, name: &str, bytes: &[u8]) -> Result<(), Failure> {
         let path = self.directory.join(name);
-        let failure = |source| Failure::Write { path: path.clone(), source };
+        let failure = |source| Failure::Write {
+            path: path.clone(),
+            source,
+        };
         if path.is_dir() {
-            return Err(failure(io::Error::new(io::ErrorKind::IsADirectory, "a directory has this name")));
+            return Err(failure(io::Error::new(
+                io::ErrorKind::IsADirectory,
+                "a directory has this name",
+            )));
         }
         let mut builder = tempfile::Builder::new();
         builder.prefix(".spanwise-");
@@ -76,7 +88,7 @@ impl Files {
             builder.permissions(std::fs::Permissions::from_mode(0o666));
         }
         let mut file = builder.tempfile_in(&self.directory).map_err(failure)?;
-        file.write_all(bytes).and_then(|()| file.as_file().sync_data()).map_err(failure)?;
+        file.write_all(bytes).map_err(failure)?;
         self.waiting.push((file, path));
         Ok(())
     }
@@ -85,7 +97,10 @@ impl Files {
     pub(super) fn keep(mut self) -> Result<(), Failure> {
         self.made.clear();
         for (file, path) in self.waiting.drain(..) {
-            file.persist(&path).map_err(|error| Failure::Write { path, source: error.error })?;
+            file.persist(&path).map_err(|error| Failure::Write {
+                path,
+                source: error.error,
+            })?;
         }
         Ok(())
     }

@@ -15,7 +15,10 @@ pub(super) fn time_stamp() -> Result<String, Failure> {
         None => Ok(FIXED.to_owned()),
         Some(value) => {
             let text = value.to_string_lossy().into_owned();
-            let seconds = text.parse::<u64>().ok().filter(|seconds| *seconds <= 253_402_300_799);
+            let seconds = text
+                .parse::<u64>()
+                .ok()
+                .filter(|seconds| *seconds <= 253_402_300_799);
             seconds.map(iso).ok_or(Failure::Epoch(text))
         }
     }
@@ -32,7 +35,12 @@ fn iso(seconds: u64) -> String {
     let day = day_of_year - (153 * month + 2) / 5 + 1;
     let month = if month < 10 { month + 3 } else { month - 9 };
     let year = cycle * 400 + year + u64::from(month <= 2);
-    format!("{year:04}-{month:02}-{day:02}T{:02}:{:02}:{:02}", rest / 3_600, rest / 60 % 60, rest % 60)
+    format!(
+        "{year:04}-{month:02}-{day:02}T{:02}:{:02}:{:02}",
+        rest / 3_600,
+        rest / 60 % 60,
+        rest % 60
+    )
 }
 
 #[cfg(test)]

@@ -25,7 +25,11 @@ impl Chord {
     /// Turn against the x axis, leading edge up \[rad\].
     pub fn incidence(&self) -> f64 {
         let chord = self.rear - self.front;
-        (-chord.dot(&self.up)).atan2(chord.x)
+        chord
+            .y
+            .hypot(chord.z)
+            .copysign(-chord.dot(&self.up))
+            .atan2(chord.x)
     }
 
     /// Point at a chord fraction \[mm\].
@@ -39,6 +43,8 @@ impl Chord {
 pub struct Slices {
     /// Corners along the span: (nose, middle of the trailing edge, a point on the upper side).
     corners: Vec<[Point3<f64>; 3]>,
+    /// Chord fraction of the points that a section's place along the span is counted by.
+    fraction: f64,
     /// Component that counts as spanwise: 1 (y) or, for a fin, 2 (z).
     axis: usize,
     /// -1 on the port side, else 1.
@@ -46,8 +52,9 @@ pub struct Slices {
 }
 
 impl Slices {
-    /// Takes the edges of the faces of one side; `fin` where the surface stands along z.
-    pub fn of(loft: &Loft, fin: bool) -> Self {
+    /// Takes the edges of the faces of one side. Sections are placed along the span by their points at the chord
+    /// `fraction`; `fin` where the surface stands along z.
+    pub fn of(loft: &Loft, fraction: f64, fin: bool) -> Self {
         let mut corners = Vec::with_capacity(loft.panels() + 1);
         for k in 0..=loft.panels() {
             // the faces' own boundaries: inner ends of each panel, then the outer end of the last
@@ -59,6 +66,7 @@ impl Slices {
         }
         Self {
             corners,
+            fraction,
             axis: if fin { 2 } else { 1 },
             sense: if loft.port { -1.0 } else { 1.0 },
         }
@@ -83,18 +91,23 @@ impl Slices {
         }
     }
 
-    /// The chord in the plane at `offset` from the centreline \[mm\]: each edge is cut by that plane. `None` where
-    /// no panel is cut.
+    /// The chord of the section whose point at the chord fraction lies `offset` from the centreline \[mm\]: all edges
+    /// are cut at the same share of their panel, in the plane at that offset where the panel's end sections are
+    /// parallel. `None` where there is no panel.
     pub fn at_offset(&self, offset: f64) -> Option<Chord> {
         self.corners.windows(2).rev().find_map(|pair| {
-            let cut = |which: usize| {
-                let (a, b) = (pair[0][which], pair[1][which]);
-                let (from, to) = (self.offset(&a), self.offset(&b));
-                let t = (offset - from) / (to - from);
-                (-1e-9..=1.0 + 1e-9).contains(&t).then(|| a + (b - a) * t)
-            };
-            Some(chord(cut(0)?, cut(1)?, cut(2)?))
+            let (from, to) = (self.place(&pair[0]), self.place(&pair[1]));
+            let t = (offset - from) / (to - from);
+            (-1e-9..=1.0 + 1e-9).contains(&t).then(|| {
+                let [front, rear, above] = [0, 1, 2].map(|k| pair[0][k] + (pair[1][k] - pair[0][k]) * t);
+                chord(front, rear, above)
+            })
         })
+    }
+
+    /// Offset of a section's point at the chord fraction.
+    fn place(&self, [front, rear, _]: &[Point3<f64>; 3]) -> f64 {
+        self.offset(&(front + (rear - front) * self.fraction))
     }
 
     /// Area, mean aerodynamic chord and its offset, by quadrature over chords cut panel by panel.

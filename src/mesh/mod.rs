@@ -10,8 +10,8 @@ mod deviation;
 mod spacing;
 
 pub use build::build;
-pub use check::{Finding, check};
 pub(crate) use check::single;
+pub use check::{Finding, check};
 
 use nalgebra::Point3;
 
@@ -36,18 +36,6 @@ impl Mesh {
             .map(|[a, b, c]| corner(*a).dot(&corner(*b).cross(&corner(*c))))
             .sum::<f64>()
             / 6.0
-    }
-
-    /// Takes in another mesh that shares no corner with this one.
-    ///
-    /// # Panics
-    ///
-    /// Where both together have 2³² corners or more.
-    pub fn append(&mut self, other: Self) {
-        let offset = u32::try_from(self.corners.len()).expect("a mesh has fewer than 2^32 corners");
-        self.corners.extend(other.corners);
-        self.facets.extend(other.facets.into_iter().map(|facet| facet.map(|k| k + offset)));
-        self.deviation = self.deviation.max(other.deviation);
     }
 
     /// Area of all facets \[mm²\].

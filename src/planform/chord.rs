@@ -40,10 +40,14 @@ impl ChordLine {
         (self.trailing_edge - self.leading_edge).normalize()
     }
 
-    /// Incidence, leading edge up \[rad\].
+    /// Incidence: the angle between the chord line and the x axis, leading edge up \[rad\].
     pub fn incidence(&self) -> f64 {
         let chord = self.trailing_edge - self.leading_edge;
-        (-chord.dot(&self.up)).atan2(chord.x)
+        chord
+            .y
+            .hypot(chord.z)
+            .copysign(-chord.dot(&self.up))
+            .atan2(chord.x)
     }
 
     /// Point at a chord fraction \[mm\].

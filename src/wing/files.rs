@@ -1,6 +1,8 @@
 //! The files of a wing, as bytes.
 
 use super::{Error, Wing};
+use crate::mesh::Mesh;
+use crate::spec::Sides;
 use crate::write::step::{Attribute, Document, Properties, ReferenceForm, Schema, Value};
 use crate::write::{step, stl};
 
@@ -72,31 +74,63 @@ impl Wing {
         Ok(bytes)
     }
 
-    /// The STL file.
-    pub fn stl(&self) -> Vec<u8> {
-        let mut bytes = Vec::with_capacity(84 + 50 * self.mesh.facets.len());
-        stl::write(&self.mesh, self.spec.unit.millimetres(), &mut bytes).expect("a vector takes all bytes");
-        bytes
+    /// The STL files: one a solid, because STL cannot tell two solids that touch apart.
+    pub fn stl(&self) -> Vec<Vec<u8>> {
+        let write = |mesh: &Mesh| {
+            let mut bytes = Vec::with_capacity(84 + 50 * mesh.facets.len());
+            stl::write(mesh, self.spec.unit.millimetres(), &mut bytes).expect("a vector takes all bytes");
+            bytes
+        };
+        self.meshes.iter().map(write).collect()
+    }
+
+    /// Names of the files of a kind, each with its key in the figures: one, or an STL file for each solid of a pair.
+    pub fn names(&self, kind: Kind, stem: &str) -> Vec<(String, String)> {
+        let ending = kind.name();
+        if kind == Kind::Stl && self.spec.sides == Sides::Pair {
+            return vec![
+                (ending.to_owned(), format!("{stem}-starboard.{ending}")),
+                (format!("{ending}_port"), format!("{stem}-port.{ending}")),
+            ];
+        }
+        vec![(ending.to_owned(), format!("{stem}.{ending}"))]
     }
 
     /// Figures that go into the STEP file as attributes.
     fn attributes(&self) -> Vec<Attribute> {
         let wing = &self.planform.wing;
-        let attribute = |name: &str, value: Value| Attribute { name: name.to_owned(), value };
+        let attribute = |name: &str, value: Value| Attribute {
+            name: name.to_owned(),
+            value,
+        };
         let mut attributes = vec![
             attribute("reference span", Value::Length(wing.span)),
             attribute("reference area", Value::Area(wing.area)),
             attribute("aspect ratio", Value::Ratio(wing.aspect_ratio())),
             attribute("taper ratio", Value::Ratio(wing.taper_ratio())),
             attribute("mean aerodynamic chord", Value::Length(wing.mac.length)),
-            attribute("incidence at the mean aerodynamic chord", Value::Angle(wing.mac.incidence)),
-            attribute("incidence at the root", Value::Angle(self.planform.stations[0].incidence)),
-            attribute("section fit deviation of the chord", Value::Ratio(self.section_deviation)),
+            attribute(
+                "incidence at the mean aerodynamic chord",
+                Value::Angle(wing.mac.incidence),
+            ),
+            attribute(
+                "incidence at the root",
+                Value::Angle(self.planform.stations[0].incidence),
+            ),
+            attribute(
+                "section fit deviation of the chord",
+                Value::Ratio(self.section_deviation),
+            ),
         ];
-        let airfoils = std::iter::once(&self.spec.root_airfoil).chain(self.spec.panels.iter().map(|p| &p.airfoil));
+        let airfoils =
+            std::iter::once(&self.spec.root_airfoil).chain(self.spec.panels.iter().map(|p| &p.airfoil));
         let mut texts: Vec<&str> = airfoils.map(|airfoil| airfoil.text.as_str()).collect();
         texts.dedup();
-        let sections: String = texts.join(", ").chars().map(|c| if c.is_ascii_graphic() || c == ' ' { c } else { '?' }).collect();
+        let sections: String = texts
+            .join(", ")
+            .chars()
+            .map(|c| if c.is_ascii_graphic() || c == ' ' { c } else { '?' })
+            .collect();
         attributes.push(attribute("sections from root to tip", Value::Text(sections)));
         attributes
     }

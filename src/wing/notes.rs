@@ -7,7 +7,12 @@ use crate::planform::Planform;
 use crate::spec::Sides;
 
 /// The notes of a wing.
-pub(super) fn notes(prepared: &Prepared, planform: &Planform, loft: &Loft, profiles: &Profiles) -> Vec<String> {
+pub(super) fn notes(
+    prepared: &Prepared,
+    planform: &Planform,
+    loft: &Loft,
+    profiles: &Profiles,
+) -> Vec<String> {
     let spec = &prepared.spec;
     let unit = spec.unit;
     let mut notes = vec![
@@ -17,11 +22,16 @@ pub(super) fn notes(prepared: &Prepared, planform: &Planform, loft: &Loft, profi
     ];
     let base = |k: usize| (loft.sections[k].upper_tail() - loft.sections[k].lower_tail()).norm();
     let last = loft.sections.len() - 1;
-    let formula = prepared.sections.iter().any(|section| airfoil::is_designation(&section.name));
+    let formula = prepared
+        .sections
+        .iter()
+        .any(|section| airfoil::is_designation(&section.name));
     notes.push(match spec.trailing_edge {
-        Some(0.0) if formula => "Trailing edge sharp: NACA sections with the last thickness coefficient -0.1036 in place \
+        Some(0.0) if formula => {
+            "Trailing edge sharp: NACA sections with the last thickness coefficient -0.1036 in place \
             of -0.1015; coordinates closed by a wedge in proportion to x."
-            .to_owned(),
+                .to_owned()
+        }
         Some(0.0) => "Trailing edge sharp: coordinates closed by a wedge in proportion to x.".to_owned(),
         _ if !loft.blunt => "Trailing edge sharp, as the sections define it.".to_owned(),
         given => {

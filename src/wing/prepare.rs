@@ -23,10 +23,16 @@ pub struct Prepared {
 /// # Errors
 ///
 /// Every fault of the spec and of its sections, in the order of the file.
-pub fn prepare(source: &Source<'_>, open: &dyn Fn(&str) -> io::Result<Vec<u8>>) -> Result<Prepared, Vec<Fault>> {
+pub fn prepare(
+    source: &Source<'_>,
+    open: &dyn Fn(&str) -> io::Result<Vec<u8>>,
+) -> Result<Prepared, Vec<Fault>> {
     let reading = spec::read(source);
     let mut faults = reading.faults;
-    let sharp = reading.spec.as_ref().is_some_and(|spec| spec.trailing_edge == Some(0.0));
+    let sharp = reading
+        .spec
+        .as_ref()
+        .is_some_and(|spec| spec.trailing_edge == Some(0.0));
     let (mut texts, mut sections, mut notes) = (Vec::<String>::new(), Vec::new(), Vec::new());
     for airfoil in &reading.airfoils {
         if texts.contains(&airfoil.text) {
@@ -47,7 +53,12 @@ pub fn prepare(source: &Source<'_>, open: &dyn Fn(&str) -> io::Result<Vec<u8>>) 
     let chosen = (std::iter::once(&spec.root_airfoil).chain(spec.panels.iter().map(|panel| &panel.airfoil)))
         .map(|airfoil| find(airfoil).expect("a reading names every airfoil of its spec"))
         .collect();
-    Ok(Prepared { spec, sections, chosen, notes })
+    Ok(Prepared {
+        spec,
+        sections,
+        chosen,
+        notes,
+    })
 }
 
 fn load(
@@ -58,7 +69,12 @@ fn load(
 ) -> Result<Section, Box<Fault>> {
     let text = airfoil.text.as_str();
     let fault = |problem: String, remedy: String| {
-        Box::new(Fault { place: airfoil.place.clone(), text: format!("\"{text}\""), problem, remedy })
+        Box::new(Fault {
+            place: airfoil.place.clone(),
+            text: format!("\"{text}\""),
+            problem,
+            remedy,
+        })
     };
     if airfoil::is_designation(text) {
         let mut formula = airfoil::parse(text).map_err(|unknown| fault(unknown.reason, unknown.remedy))?;
@@ -72,13 +88,27 @@ fn load(
         )
     })?;
     let contour = coordinates::read(&bytes, text).map_err(|e| {
-        let place = if e.line() > 0 { format!(", line {}", e.line()) } else { String::new() };
-        let typed = if e.text().is_empty() { String::new() } else { format!(" (`{}`)", e.text().trim()) };
-        fault(format!("{text}{place}{typed}: {}", e.reason()), e.remedy().to_owned())
+        let place = if e.line() > 0 {
+            format!(", line {}", e.line())
+        } else {
+            String::new()
+        };
+        let typed = if e.text().is_empty() {
+            String::new()
+        } else {
+            format!(" (`{}`)", e.text().trim())
+        };
+        fault(
+            format!("{text}{place}{typed}: {}", e.reason()),
+            e.remedy().to_owned(),
+        )
     })?;
     let section = Section::from_contour(text, &contour).map_err(|e| fault(e.to_string(), String::new()))?;
     if !contour.notes.is_empty() {
-        notes.push(format!("{text}: {}.", contour.notes.join("; ").trim_end_matches('.')));
+        notes.push(format!(
+            "{text}: {}.",
+            contour.notes.join("; ").trim_end_matches('.')
+        ));
     }
     Ok(section)
 }

@@ -20,10 +20,19 @@ impl Wing {
         let side = |p: nalgebra::Point3<f64>| point(nalgebra::Point3::new(p.x, p.y * sign + 0.0, p.z));
         let leading_edge = side(mac.leading_edge);
         let volume: f64 = self.figures.iter().map(|f| f.volume).sum();
-        let moment = self.figures.iter().fold(nalgebra::Vector3::zeros(), |sum, f| sum + f.centroid.coords * f.volume);
-        let sides = if matches!(self.spec.sides, Sides::Both | Sides::Pair) { 2.0 } else { 1.0 };
+        let moment = self.figures.iter().fold(nalgebra::Vector3::zeros(), |sum, f| {
+            sum + f.centroid.coords * f.volume
+        });
+        let sides = if matches!(self.spec.sides, Sides::Both | Sides::Pair) {
+            2.0
+        } else {
+            1.0
+        };
         let found = self.slices.planform();
-        let tip = self.slices.at_station(self.slices.stations() - 1).at(self.spec.setting.twist_axis);
+        let tip = self
+            .slices
+            .at_station(self.slices.stations() - 1)
+            .at(self.spec.setting.twist_axis);
         Record {
             name: self.spec.name.clone(),
             unit: self.spec.unit.symbol().to_owned(),
@@ -54,15 +63,19 @@ impl Wing {
                 solids: self.solids.len(),
                 faces: self.solids.iter().map(|solid| solid.faces.len()).sum(),
             },
-            checks: self.checks.iter().map(|check| in_unit(check, self.spec.unit)).collect(),
+            checks: self
+                .checks
+                .iter()
+                .map(|check| in_unit(check, self.spec.unit))
+                .collect(),
             section_fit: SectionFit {
                 max_deviation: self.section_deviation,
                 upper_points: self.profiles.upper.count(),
                 lower_points: self.profiles.lower.count(),
             },
             mesh: MeshFigures {
-                facets: self.mesh.facets.len(),
-                max_deviation: self.mesh.deviation / unit,
+                facets: self.meshes.iter().map(|mesh| mesh.facets.len()).sum(),
+                max_deviation: self.meshes.iter().map(|mesh| mesh.deviation).fold(0.0, f64::max) / unit,
                 // a wing is built only where the check of its facets passes
                 watertight: true,
             },

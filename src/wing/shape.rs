@@ -30,8 +30,8 @@ pub struct Wing {
     pub slices: Slices,
     /// What was asked for beside what was found.
     pub checks: Vec<Check>,
-    /// Facets of all solids.
-    pub mesh: Mesh,
+    /// Facets of each solid.
+    pub meshes: Vec<Mesh>,
     /// Construction geometry.
     pub reference: Reference,
     /// Cautions and guidance.
@@ -45,11 +45,19 @@ impl Wing {
     ///
     /// [`Error`] where the sections cannot be fitted or joined.
     pub fn build(prepared: &Prepared) -> Result<Self, Error> {
-        let Prepared { spec, sections, chosen, .. } = prepared;
+        let Prepared {
+            spec,
+            sections,
+            chosen,
+            ..
+        } = prepared;
         let planform = Planform::of(spec);
         let sections: Vec<&airfoil::Section> = sections.iter().collect();
         let profiles = airfoil::fit(&sections, airfoil::TOLERANCE)?;
-        let given = sections.iter().map(|section| section.deviation).fold(0.0, f64::max);
+        let given = sections
+            .iter()
+            .map(|section| section.deviation)
+            .fold(0.0, f64::max);
         let section_deviation = given + profiles.deviation;
         let starboard = Loft::new(&planform, &profiles, chosen, spec.trailing_edge)?;
         let port = starboard.mirrored();
@@ -59,15 +67,24 @@ impl Wing {
             Sides::Port => vec![("port wing", vec![&port])],
             Sides::Pair => vec![("starboard wing", vec![&starboard]), ("port wing", vec![&port])],
         };
-        let solids = groups.iter().map(|(name, lofts)| solid::build(name, lofts)).collect::<Result<Vec<_>, _>>()?;
+        let solids = groups
+            .iter()
+            .map(|(name, lofts)| solid::build(name, lofts))
+            .collect::<Result<Vec<_>, _>>()?;
         let figures: Vec<Figures> = groups.iter().map(|(_, lofts)| measure::figures(lofts)).collect();
-        let mut mesh = Mesh::default();
-        for (_, lofts) in &groups {
-            mesh.append(mesh::build(lofts, spec.facet_tolerance));
+        let meshes: Vec<Mesh> = groups
+            .iter()
+            .map(|(_, lofts)| mesh::build(lofts, spec.facet_tolerance))
+            .collect();
+        for mesh in &meshes {
+            mesh::check(mesh, spec.unit.millimetres()).map_err(Error::Mesh)?;
         }
-        mesh::check(&mesh, spec.unit.millimetres()).map_err(Error::Mesh)?;
-        let side = if spec.sides == Sides::Port { &port } else { &starboard };
-        let slices = Slices::of(side, planform.fin);
+        let side = if spec.sides == Sides::Port {
+            &port
+        } else {
+            &starboard
+        };
+        let slices = Slices::of(side, spec.setting.twist_axis, planform.fin);
         let checks = compare(asks(spec, &planform, &slices));
         let reference = reference_geometry(spec, &planform);
         let notes = notes(prepared, &planform, &starboard, &profiles);
@@ -80,7 +97,7 @@ impl Wing {
             figures,
             slices,
             checks,
-            mesh,
+            meshes,
             reference,
             notes,
         })

@@ -133,7 +133,8 @@ pub struct MeshFigures {
 ///
 /// Never: a record holds nothing that JSON cannot say.
 pub fn json(record: &Record) -> String {
-    let mut text = serde_json::to_string_pretty(record).expect("a record has text keys and plain values only");
+    let mut text =
+        serde_json::to_string_pretty(record).expect("a record has text keys and plain values only");
     text.push('\n');
     text
 }

@@ -12,7 +12,17 @@ pub fn sheet(record: &Record) -> String {
 }
 
 fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
-    let Record { name, unit, reference, built, checks, section_fit, mesh, notes, files } = record;
+    let Record {
+        name,
+        unit,
+        reference,
+        built,
+        checks,
+        section_fit,
+        mesh,
+        notes,
+        files,
+    } = record;
     let mac = &reference.mac;
     let title: String = name.chars().take(100).collect();
     writeln!(out, "{title}")?;
@@ -45,7 +55,11 @@ fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
     let [x, y, z] = reference.aerodynamic_centre.map(figure);
     writeln!(out, "  aerodynamic centre at x {x}, y {y}, z {z} {unit}")?;
     writeln!(out)?;
-    let parts = if built.solids == 1 { "one solid".to_owned() } else { format!("{} solids", built.solids) };
+    let parts = if built.solids == 1 {
+        "one solid".to_owned()
+    } else {
+        format!("{} solids", built.solids)
+    };
     writeln!(out, "Built wing ({parts}, {} faces)", built.faces)?;
     writeln!(
         out,
@@ -63,8 +77,17 @@ fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
         section_fit.upper_points,
         section_fit.lower_points
     )?;
-    let closed = if mesh.watertight { "watertight" } else { "NOT WATERTIGHT" };
-    writeln!(out, "  {} facets, {closed}, within {} {unit} of the surface", mesh.facets, figure(mesh.max_deviation))?;
+    let closed = if mesh.watertight {
+        "watertight"
+    } else {
+        "NOT WATERTIGHT"
+    };
+    writeln!(
+        out,
+        "  {} facets, {closed}, within {} {unit} of the surface",
+        mesh.facets,
+        figure(mesh.max_deviation)
+    )?;
     writeln!(out)?;
     let header = ["", "asked", "measured", "deviation", "allowed", ""];
     let mut rows = vec![header.map(str::to_owned)];
@@ -96,7 +119,12 @@ fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
 
 /// Text columns, the first to the left, the others to the right.
 fn table(rows: &[[String; 6]], out: &mut String) -> std::fmt::Result {
-    let width = |column: usize| rows.iter().map(|row| row[column].trim_end().chars().count()).max().unwrap_or(0);
+    let width = |column: usize| {
+        rows.iter()
+            .map(|row| row[column].trim_end().chars().count())
+            .max()
+            .unwrap_or(0)
+    };
     let widths: [usize; 6] = std::array::from_fn(width);
     for row in rows {
         let mut line = format!("{:<1$}", row[0], widths[0]);
@@ -117,12 +145,20 @@ pub(super) fn figure(value: f64) -> String {
     let digits = 6.0 - value.abs().log10().floor();
     let decimals = (0..=9_u8).find(|d| f64::from(*d) >= digits).unwrap_or(9);
     let text = format!("{value:.0$}", usize::from(decimals));
-    if text.contains('.') { text.trim_end_matches('0').trim_end_matches('.').to_owned() } else { text }
+    if text.contains('.') {
+        text.trim_end_matches('0').trim_end_matches('.').to_owned()
+    } else {
+        text
+    }
 }
 
 /// Two significant digits with an exponent, for deviations.
 fn small(value: f64) -> String {
-    if value == 0.0 { "0".into() } else { format!("{value:.1e}") }
+    if value == 0.0 {
+        "0".into()
+    } else {
+        format!("{value:.1e}")
+    }
 }
 
 /// Breaks a text into lines of at most `width` characters, further lines indented.

@@ -19,13 +19,19 @@ pub fn write(mesh: &Mesh, unit: f64, out: &mut impl Write) -> io::Result<()> {
         // the normal of the rounded facet, so that the file agrees with itself
         let [a, b, c] = vertices.map(|v| Vector3::from(v.map(f64::from)));
         let normal = (b - a).cross(&(c - a)).normalize();
-        Triangle { normal: Vector::new(narrow(normal)), vertices: vertices.map(Vector::new) }
+        Triangle {
+            normal: Vector::new(narrow(normal)),
+            vertices: vertices.map(Vector::new),
+        }
     });
     // the writer asks for an exact size, which the map has
     stl_io::write_stl(out, triangles)
 }
 
-#[expect(clippy::cast_possible_truncation, reason = "the format's numbers have 32 bits")]
+#[expect(
+    clippy::cast_possible_truncation,
+    reason = "the format's numbers have 32 bits"
+)]
 fn narrow(v: Vector3<f64>) -> [f32; 3] {
     [v.x as f32 + 0.0, v.y as f32 + 0.0, v.z as f32 + 0.0]
 }

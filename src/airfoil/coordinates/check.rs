@@ -1,10 +1,10 @@
 //! What cannot be a section.
 
+use crate::airfoil::coordinates::MIN_SIDE;
 use crate::airfoil::coordinates::crossing;
 use crate::airfoil::coordinates::error::Error;
 use crate::airfoil::coordinates::order::Run;
 use crate::airfoil::coordinates::text::{Line, place};
-use crate::airfoil::coordinates::MIN_SIDE;
 
 /// Thickness of a section \[chord\]: more than the first, at most the second.
 const THICKNESS: [f64; 2] = [1e-4, 0.6];
@@ -26,19 +26,29 @@ pub(super) fn section(
     }
     let (upper, lower) = (nose + 1, points.len() - nose);
     if upper < MIN_SIDE || lower < MIN_SIDE {
-        return Err(Error::TooFewPoints { at: at(nose), upper, lower });
+        return Err(Error::TooFewPoints {
+            at: at(nose),
+            upper,
+            lower,
+        });
     }
     if let Some(i) = spike(&points, nose, unit) {
         return Err(Error::Spike { at: at(i) });
     }
     let thickness = thickness(&points[..=nose], &points[nose..]);
     if !(thickness > THICKNESS[0] && thickness <= THICKNESS[1]) {
-        return Err(Error::Thickness { at: at(nose), thickness });
+        return Err(Error::Thickness {
+            at: at(nose),
+            thickness,
+        });
     }
     let last = points.len() - 1;
     let overlap = points[last][1] - points[0][1];
     if overlap > 2.0 * unit {
-        return Err(Error::CrossedTrailingEdge { at: at(last), overlap });
+        return Err(Error::CrossedTrailingEdge {
+            at: at(last),
+            overlap,
+        });
     }
     if overlap > 0.0 {
         points[0] = [1.0, 0.0];
@@ -76,7 +86,11 @@ fn thickness(upper: &[[f64; 2]], lower: &[[f64; 2]]) -> f64 {
     let height = |side: &[[f64; 2]], x: f64| {
         let k = side.partition_point(|p| p[0] < x).clamp(1, side.len() - 1);
         let (p, q) = (side[k - 1], side[k]);
-        let share = if q[0] > p[0] { ((x - p[0]) / (q[0] - p[0])).clamp(0.0, 1.0) } else { 0.0 };
+        let share = if q[0] > p[0] {
+            ((x - p[0]) / (q[0] - p[0])).clamp(0.0, 1.0)
+        } else {
+            0.0
+        };
         p[1] + (q[1] - p[1]) * share
     };
     let (up, low) = (sorted(upper), sorted(lower));

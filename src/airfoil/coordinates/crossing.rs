@@ -32,8 +32,16 @@ impl Piece {
     fn halves(self) -> [Self; 2] {
         let middle = self.from + (self.to - self.from) / 2;
         [
-            Self { node: 2 * self.node + 1, from: self.from, to: middle },
-            Self { node: 2 * self.node + 2, from: middle, to: self.to },
+            Self {
+                node: 2 * self.node + 1,
+                from: self.from,
+                to: middle,
+            },
+            Self {
+                node: 2 * self.node + 2,
+                from: middle,
+                to: self.to,
+            },
         ]
     }
 
@@ -46,8 +54,18 @@ impl Piece {
 /// them is wider than `unit` on average; sides that only touch within the print rounding do not count.
 pub(super) fn find(points: &[[f64; 2]], unit: f64) -> Option<(usize, usize)> {
     let segments = points.len().checked_sub(1).filter(|&n| n > 2)?;
-    let root = Piece { node: 0, from: 0, to: segments };
-    let mut boxes = vec![Box2 { low: [0.0; 2], high: [0.0; 2] }; 4 * segments];
+    let root = Piece {
+        node: 0,
+        from: 0,
+        to: segments,
+    };
+    let mut boxes = vec![
+        Box2 {
+            low: [0.0; 2],
+            high: [0.0; 2]
+        };
+        4 * segments
+    ];
     enclose(points, root, &mut boxes);
     let loops = Loops::new(points);
     let mut pending = vec![(root, root)];
@@ -78,7 +96,10 @@ pub(super) fn find(points: &[[f64; 2]], unit: f64) -> Option<(usize, usize)> {
 
 fn enclose(points: &[[f64; 2]], piece: Piece, boxes: &mut [Box2]) -> Box2 {
     let all = if piece.is_leaf() {
-        let mut all = Box2 { low: [f64::INFINITY; 2], high: [f64::NEG_INFINITY; 2] };
+        let mut all = Box2 {
+            low: [f64::INFINITY; 2],
+            high: [f64::NEG_INFINITY; 2],
+        };
         for p in &points[piece.from..=piece.to] {
             for k in 0..2 {
                 all.low[k] = all.low[k].min(p[k]);
@@ -125,10 +146,7 @@ fn turn(p: [f64; 2], q: [f64; 2], r: [f64; 2]) -> f64 {
 /// Whether the segments p-q and r-s have a point in common.
 fn meet(p: [f64; 2], q: [f64; 2], r: [f64; 2], s: [f64; 2]) -> bool {
     let overlap = |k: usize| p[k].min(q[k]) <= r[k].max(s[k]) && r[k].min(s[k]) <= p[k].max(q[k]);
-    overlap(0)
-        && overlap(1)
-        && turn(p, q, r) * turn(p, q, s) <= 0.0
-        && turn(r, s, p) * turn(r, s, q) <= 0.0
+    overlap(0) && overlap(1) && turn(p, q, r) * turn(p, q, s) <= 0.0 && turn(r, s, p) * turn(r, s, q) <= 0.0
 }
 
 /// Areas and lengths of the loops that a crossing cuts off, from sums along the run.
@@ -158,7 +176,8 @@ impl Loops {
         let outer = self.area[i] + cross(points[i], points[j + 1]) + self.area[end] - self.area[j + 1]
             + cross(points[end], points[0]);
         let inner_length = self.length[j] - self.length[i + 1];
-        let outer_length = self.length[i] + self.length[end] - self.length[j + 1] + apart(points[0], points[end]);
+        let outer_length =
+            self.length[i] + self.length[end] - self.length[j + 1] + apart(points[0], points[end]);
         let mean = |area: f64, length: f64| if length > 0.0 { area.abs() / length } else { 0.0 };
         mean(inner, inner_length).min(mean(outer, outer_length))
     }

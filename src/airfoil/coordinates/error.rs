@@ -17,7 +17,15 @@ impl Place {
     /// Line `line` with its text.
     pub(super) fn new(line: usize, text: &str) -> Self {
         let shown = text.trim().chars().take(100);
-        let text = shown.map(|c| if c.is_control() && c != '\t' { char::REPLACEMENT_CHARACTER } else { c }).collect();
+        let text = shown
+            .map(|c| {
+                if c.is_control() && c != '\t' {
+                    char::REPLACEMENT_CHARACTER
+                } else {
+                    c
+                }
+            })
+            .collect();
         Self { line, text }
     }
 }
@@ -177,7 +185,9 @@ impl Error {
             Self::TooManyPoints { .. } => format!("more than {MAX_POINTS} points"),
             Self::Words { .. } => "not a row of numbers, and it stands among the coordinates".to_owned(),
             Self::Columns { found, usual, .. } if found == usual => {
-                format!("rows of {found} numbers that are neither coordinates nor stations with two ordinates")
+                format!(
+                    "rows of {found} numbers that are neither coordinates nor stations with two ordinates"
+                )
             }
             Self::Columns { found, usual, .. } => {
                 format!("{found} in a row, but {usual} in most rows of the file")
@@ -188,16 +198,25 @@ impl Error {
                 format!("{upper} and {lower} points on the two sides; each needs at least {MIN_SIDE}")
             }
             Self::NotOneContour { why, .. } => format!("the points are not one run around a section: {why}"),
-            Self::Spike { .. } => "a point far off the curve through its neighbours, or out of order".to_owned(),
+            Self::Spike { .. } => {
+                "a point far off the curve through its neighbours, or out of order".to_owned()
+            }
             Self::NoseAft { .. } => "the blunt end is aft (at greater x) of the sharp one".to_owned(),
             Self::NoChord { .. } => "all points are in one place".to_owned(),
             Self::Thickness { thickness, .. } => {
-                format!("the section is {:.3} % of its chord thick; more than 0.01 % and at most 60 % can be", thickness * 100.0)
+                format!(
+                    "the section is {:.3} % of its chord thick; more than 0.01 % and at most 60 % can be",
+                    thickness * 100.0
+                )
             }
             Self::CrossedTrailingEdge { overlap, .. } => {
-                format!("at the trailing edge the upper side ends {overlap:.6} of the chord below the lower side")
+                format!(
+                    "at the trailing edge the upper side ends {overlap:.6} of the chord below the lower side"
+                )
             }
-            Self::CrossesItself { other, .. } => format!("the contour crosses itself here and at line {other}"),
+            Self::CrossesItself { other, .. } => {
+                format!("the contour crosses itself here and at line {other}")
+            }
         }
     }
 
@@ -207,7 +226,9 @@ impl Error {
             Self::Empty { .. } | Self::NoPoints { .. } | Self::Binary { .. } => {
                 "give a text file with a row of x and y for each point"
             }
-            Self::TooLarge { .. } | Self::TooManyPoints { .. } => "leave out points: 100 to 400 describe a section well",
+            Self::TooLarge { .. } | Self::TooManyPoints { .. } => {
+                "leave out points: 100 to 400 describe a section well"
+            }
             Self::Words { .. } => "correct the row, or mark a remark with # at its beginning",
             Self::Columns { .. } => "give x and y in each row",
             Self::NotFinite { .. } => "correct the number",
@@ -217,8 +238,12 @@ impl Error {
                 "list one section: from the trailing edge over the top to the nose and back, or both sides from the nose"
             }
             Self::Spike { .. } => "correct or remove the point",
-            Self::NoseAft { .. } => "mirror or turn the coordinates so that x runs from the nose to the trailing edge",
-            Self::NoChord { .. } | Self::Thickness { .. } => "check that the columns are x and y at the same scale",
+            Self::NoseAft { .. } => {
+                "mirror or turn the coordinates so that x runs from the nose to the trailing edge"
+            }
+            Self::NoChord { .. } | Self::Thickness { .. } => {
+                "check that the columns are x and y at the same scale"
+            }
             Self::CrossedTrailingEdge { .. } | Self::CrossesItself { .. } => {
                 "correct the points so that the upper side stays above the lower side"
             }

@@ -16,7 +16,8 @@ impl Form {
         let x = s * s;
         let (m, p) = (self.camber, self.camber_at);
         let last = if self.open { -0.1015 } else { -0.1036 };
-        let half = 5.0 * self.thickness
+        let half = 5.0
+            * self.thickness
             * (0.2969 * s.abs() + x * (-0.1260 + x * (-0.3516 + x * (0.2843 + x * last))));
         let (y, slope) = if x < p {
             (m / (p * p) * (2.0 * p * x - x * x), 2.0 * m / (p * p) * (p - x))
@@ -54,7 +55,11 @@ impl Form {
         let (mut low, mut high) = (-0.2, 0.2);
         for _ in 0..200 {
             let (a, b) = (low + (high - low) / 3.0, high - (high - low) / 3.0);
-            if distance(a) > distance(b) { high = b } else { low = a }
+            if distance(a) > distance(b) {
+                high = b
+            } else {
+                low = a
+            }
         }
         self.point(0.5 * (low + high))
     }
@@ -62,7 +67,9 @@ impl Form {
 
 /// `n` stations between nose and trailing edge: even in s, each moved by up to `jitter` of its step by the numbers given.
 pub(super) fn stations(n: usize, jitter: &[f64]) -> Vec<f64> {
-    (1..=n).map(|i| (i as f64 + jitter[i % jitter.len()]) / (n as f64 + 1.0)).collect()
+    (1..=n)
+        .map(|i| (i as f64 + jitter[i % jitter.len()]) / (n as f64 + 1.0))
+        .collect()
 }
 
 /// The public layouts and what else is found.
@@ -129,14 +136,21 @@ fn number(value: f64, style: &Style) -> String {
         5 => plain.trim_end_matches('0').to_owned(),
         _ => plain,
     };
-    if style.decimal_comma { text.replace('.', ",") } else { text }
+    if style.decimal_comma {
+        text.replace('.', ",")
+    } else {
+        text
+    }
 }
 
 /// The bytes of a file that holds `points`, with the nose at index `nose`.
 pub(super) fn file(points: &[[f64; 2]], nose: usize, style: &Style) -> Vec<u8> {
     let (s, c) = style.turn.sin_cos();
     let put = |p: &[f64; 2]| {
-        let q = [p[0] * c - p[1] * s + style.shift[0], p[0] * s + p[1] * c + style.shift[1]];
+        let q = [
+            p[0] * c - p[1] * s + style.shift[0],
+            p[0] * s + p[1] * c + style.shift[1],
+        ];
         q.map(|v| v * style.scale)
     };
     let all: Vec<[f64; 2]> = points.iter().map(put).collect();
@@ -184,7 +198,12 @@ pub(super) fn file(points: &[[f64; 2]], nose: usize, style: &Style) -> Vec<u8> {
     let mut lines: Vec<String> = Vec::new();
     lines.extend(style.title.map(str::to_owned));
     if style.layout == Layout::Counted {
-        lines.push(format!("{}{}{}", blocks[0].len(), style.separator, blocks[1].len()));
+        lines.push(format!(
+            "{}{}{}",
+            blocks[0].len(),
+            style.separator,
+            blocks[1].len()
+        ));
     }
     let mut running = 0;
     for block in &blocks {
@@ -209,13 +228,19 @@ pub(super) fn file(points: &[[f64; 2]], nose: usize, style: &Style) -> Vec<u8> {
     }
     let text = lines.join(style.end) + style.end;
     let wide = |text: &str, unit: fn(u16) -> [u8; 2]| {
-        std::iter::once(0xfeff).chain(text.encode_utf16()).flat_map(unit).collect()
+        std::iter::once(0xfeff)
+            .chain(text.encode_utf16())
+            .flat_map(unit)
+            .collect()
     };
     match style.encoding {
         1 => ("\u{feff}".to_owned() + &text).into_bytes(),
         2 => wide(&text, u16::to_le_bytes),
         3 => wide(&text, u16::to_be_bytes),
-        4 => text.chars().map(|c| u8::try_from(u32::from(c)).unwrap()).collect(),
+        4 => text
+            .chars()
+            .map(|c| u8::try_from(u32::from(c)).unwrap())
+            .collect(),
         _ => text.into_bytes(),
     }
 }

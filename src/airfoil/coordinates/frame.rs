@@ -41,10 +41,15 @@ pub(super) struct Framed {
 pub(super) fn normalise(run: &Run, lines: &[Line<'_>], notes: &mut Vec<String>) -> Result<Framed, Error> {
     let raw: Vec<[f64; 2]> = run.points.iter().map(|p| p.at).collect();
     let line = run.points.first().map_or(1, |p| p.line);
-    let no_chord = || Error::NoChord { at: place(lines, line) };
+    let no_chord = || Error::NoChord {
+        at: place(lines, line),
+    };
     let (&upper, &lower) = raw.first().zip(raw.last()).ok_or_else(no_chord)?;
     let edge = [0.5 * (upper[0] + lower[0]), 0.5 * (upper[1] + lower[1])];
-    let size = raw.iter().map(|p| (p[0] - edge[0]).hypot(p[1] - edge[1])).fold(0.0, f64::max);
+    let size = raw
+        .iter()
+        .map(|p| (p[0] - edge[0]).hypot(p[1] - edge[1]))
+        .fold(0.0, f64::max);
     if size <= 0.0 {
         return Err(no_chord());
     }
@@ -55,7 +60,10 @@ pub(super) fn normalise(run: &Run, lines: &[Line<'_>], notes: &mut Vec<String>) 
     } else {
         None
     };
-    let leading = own.map_or_else(|| nose::farthest(&raw, edge, raw_unit.min(1e-3 * size)), |x| [x, 0.0]);
+    let leading = own.map_or_else(
+        || nose::farthest(&raw, edge, raw_unit.min(1e-3 * size)),
+        |x| [x, 0.0],
+    );
     let (dx, dy) = (edge[0] - leading[0], edge[1] - leading[1]);
     let chord = if dy.abs() <= 0.0 { dx } else { dx.hypot(dy) };
     if !(chord > 0.0 && chord.is_finite()) {
@@ -80,9 +88,18 @@ pub(super) fn normalise(run: &Run, lines: &[Line<'_>], notes: &mut Vec<String>) 
     // how far the nose and the trailing edge are from where a plain factor would put them
     let at_nose = (leading[0] / plain).hypot(leading[1] / plain);
     let at_edge = (edge[0] / plain - 1.0).hypot(edge[1] / plain);
-    let moved = Moved { leading_edge: leading, chord, angle: dy.atan2(dx) };
+    let moved = Moved {
+        leading_edge: leading,
+        chord,
+        angle: dy.atan2(dx),
+    };
     if at_nose.max(at_edge) <= unit {
-        return Ok(Framed { points, decimals, unit, moved: None });
+        return Ok(Framed {
+            points,
+            decimals,
+            unit,
+            moved: None,
+        });
     }
     if own.is_none() {
         notes.push(format!(
@@ -99,7 +116,12 @@ pub(super) fn normalise(run: &Run, lines: &[Line<'_>], notes: &mut Vec<String>) 
             -moved.angle.to_degrees() + 0.0
         ));
     }
-    Ok(Framed { points, decimals, unit, moved: Some(moved) })
+    Ok(Framed {
+        points,
+        decimals,
+        unit,
+        moved: Some(moved),
+    })
 }
 
 /// Puts the middle of the trailing edge at (1, 0) where the arithmetic left it off in the last digits.
@@ -119,13 +141,21 @@ fn centre(points: &mut [[f64; 2]]) {
 fn shown(value: f64) -> String {
     let text = format!("{value:.6}");
     let text = text.trim_end_matches('0').trim_end_matches('.');
-    if text == "-0" { "0".to_owned() } else { text.to_owned() }
+    if text == "-0" {
+        "0".to_owned()
+    } else {
+        text.to_owned()
+    }
 }
 
 /// The power of ten that the chord nearly is, else the chord itself.
 fn plain_factor(chord: f64) -> f64 {
     let power = 10_f64.powf(chord.log10().round());
-    if (chord / power - 1.0).abs() <= 5e-3 { power } else { chord }
+    if (chord / power - 1.0).abs() <= 5e-3 {
+        power
+    } else {
+        chord
+    }
 }
 
 /// Decimals in units of the chord. Those of y count: stations x are often whole or short numbers, printed exactly;

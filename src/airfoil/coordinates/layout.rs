@@ -68,7 +68,10 @@ pub(super) fn recognise(lines: &[Line<'_>], notes: &mut Vec<String>) -> Result<L
     let titled = words.first().is_some_and(|&(at, _)| at == 0);
     let lead = lead(&rows, columns, titled, lines)?;
     check_words(&mut words, &rows, lead.start, lines, notes)?;
-    let first_words = words.iter().find(|&&(at, _)| at <= lead.start).map(|&(_, line)| line);
+    let first_words = words
+        .iter()
+        .find(|&&(at, _)| at <= lead.start)
+        .map(|&(_, line)| line);
     let title_line = match (first_words, lead.titles.first()) {
         (Some(a), Some(&b)) => Some(a.min(b)),
         (a, b) => a.or(b.copied()),
@@ -83,20 +86,39 @@ pub(super) fn recognise(lines: &[Line<'_>], notes: &mut Vec<String>) -> Result<L
     }
     let rows = &rows[lead.start..];
     if let Some(row) = rows.get(MAX_POINTS) {
-        return Err(Error::TooManyPoints { at: place(lines, row.line) });
+        return Err(Error::TooManyPoints {
+            at: place(lines, row.line),
+        });
     }
     for row in rows {
         let (at, found) = (place(lines, row.line), row.numbers.len());
         if found != columns {
-            return Err(Error::Columns { at, found, usual: columns });
+            return Err(Error::Columns {
+                at,
+                found,
+                usual: columns,
+            });
         }
-        if row.numbers.iter().any(|n| !n.value.is_finite() || n.value.abs() > 1e12) {
+        if row
+            .numbers
+            .iter()
+            .any(|n| !n.value.is_finite() || n.value.abs() > 1e12)
+        {
             return Err(Error::NotFinite { at });
         }
     }
     let (points, table, decimals) = pick(rows, columns, lines, notes)?;
-    let headings = words.iter().filter(|&&(at, _)| at > lead.start).map(|&(at, line)| (at - lead.start, line));
-    Ok(Listing { title, points, counted: table.or(lead.counted), headings: headings.collect(), decimals })
+    let headings = words
+        .iter()
+        .filter(|&&(at, _)| at > lead.start)
+        .map(|&(at, line)| (at - lead.start, line));
+    Ok(Listing {
+        title,
+        points,
+        counted: table.or(lead.counted),
+        headings: headings.collect(),
+        decimals,
+    })
 }
 
 /// The number of columns that most rows have.
@@ -119,7 +141,11 @@ struct Lead {
 
 /// Skips titles made of numbers and reads counts.
 fn lead(rows: &[Row<'_>], columns: usize, titled: bool, lines: &[Line<'_>]) -> Result<Lead, Error> {
-    let mut lead = Lead { start: 0, titles: Vec::new(), counted: None };
+    let mut lead = Lead {
+        start: 0,
+        titles: Vec::new(),
+        counted: None,
+    };
     for (i, row) in rows.iter().enumerate().take(4) {
         let rest = rows.len() - i - 1;
         let whole = |v: f64| v.fract().abs() <= 0.0 && (1.0..1e6).contains(&v);
@@ -127,8 +153,16 @@ fn lead(rows: &[Row<'_>], columns: usize, titled: bool, lines: &[Line<'_>]) -> R
             let sum = a + b;
             let padded = row.numbers.iter().any(|n| n.padded);
             if (sum - rest as f64).abs() < 0.5 && a.min(b) >= 3.0 && !padded {
-                let split = rows[i + 1..].iter().zip(1_usize..).take_while(|&(_, k)| k as f64 <= a).count();
-                return Ok(Lead { start: i + 1, counted: Some((split, row.line)), ..lead });
+                let split = rows[i + 1..]
+                    .iter()
+                    .zip(1_usize..)
+                    .take_while(|&(_, k)| k as f64 <= a)
+                    .count();
+                return Ok(Lead {
+                    start: i + 1,
+                    counted: Some((split, row.line)),
+                    ..lead
+                });
             }
             if columns == 2 && begins(&rows[i..]) && !(typed_apart(&rows[i..]) && b > 0.0) {
                 return Ok(lead);
@@ -138,7 +172,10 @@ fn lead(rows: &[Row<'_>], columns: usize, titled: bool, lines: &[Line<'_>]) -> R
             let after_title = titled || !lead.titles.is_empty();
             if !padded && (near || after_title && a.min(b) >= MIN_SIDE as f64 && a.max(b) < 1000.0) {
                 let found = format!("{rest} points follow");
-                return Err(Error::Counts { at: place(lines, row.line), found });
+                return Err(Error::Counts {
+                    at: place(lines, row.line),
+                    found,
+                });
             }
         } else if row.numbers.len() == columns && (columns != 2 || begins(&rows[i..])) {
             return Ok(lead);
@@ -162,7 +199,9 @@ fn typed_apart(rows: &[Row<'_>]) -> bool {
 /// Whether the first row can be the first point of a section that the rest describes: it lies near an end of the
 /// rest's extent. The next few rows may be headers too.
 fn begins(rows: &[Row<'_>]) -> bool {
-    let Some([x, y]) = rows[0].pair() else { return false };
+    let Some([x, y]) = rows[0].pair() else {
+        return false;
+    };
     let rest = rows.get(4..).unwrap_or(&[]).iter().filter_map(Row::pair);
     let (mut low, mut high) = ([f64::INFINITY; 2], [f64::NEG_INFINITY; 2]);
     for point in rest {
@@ -177,7 +216,11 @@ fn begins(rows: &[Row<'_>]) -> bool {
     }
     let margin = 0.06 * size;
     let inside = |v: f64, k: usize| v > low[k] - margin && v < high[k] + margin;
-    let long = if high[0] - low[0] >= high[1] - low[1] { (x, 0) } else { (y, 1) };
+    let long = if high[0] - low[0] >= high[1] - low[1] {
+        (x, 0)
+    } else {
+        (y, 1)
+    };
     let at_end = (long.0 - low[long.1]).min(high[long.1] - long.0) < margin;
     inside(x, 0) && inside(y, 1) && at_end
 }
@@ -197,14 +240,19 @@ fn check_words(
         let spoiled = if at < start || (at == start && start > 0) {
             false
         } else if at == 0 {
-            let first = text.split([' ', '\t', ',', ';']).find(|t| !t.is_empty()).unwrap_or("");
+            let first = text
+                .split([' ', '\t', ',', ';'])
+                .find(|t| !t.is_empty())
+                .unwrap_or("");
             let next = words.iter().all(|&(_, other)| other <= line);
             next && first.contains('.') && first.parse::<f64>().is_ok_and(|v| near_ends(v, rows))
         } else {
             text.contains(|c: char| c.is_ascii_digit())
         };
         if spoiled {
-            return Err(Error::Words { at: place(lines, line) });
+            return Err(Error::Words {
+                at: place(lines, line),
+            });
         }
     }
     let behind = words.iter().filter(|&&(at, _)| at == count).count();
@@ -218,7 +266,9 @@ fn check_words(
 /// Whether `x` is near either end of the range of the first column.
 fn near_ends(x: f64, rows: &[Row<'_>]) -> bool {
     let firsts = rows.iter().filter_map(|row| row.numbers.first()).map(|n| n.value);
-    let (low, high) = firsts.fold((f64::INFINITY, f64::NEG_INFINITY), |(l, h), v| (l.min(v), h.max(v)));
+    let (low, high) = firsts.fold((f64::INFINITY, f64::NEG_INFINITY), |(l, h), v| {
+        (l.min(v), h.max(v))
+    });
     let margin = 0.1 * (high - low);
     x > low - margin && x < high + margin
 }
@@ -227,13 +277,22 @@ fn near_ends(x: f64, rows: &[Row<'_>]) -> bool {
 type Picked = (Vec<Point>, Option<(usize, usize)>, [i32; 2]);
 
 /// Takes x and y from the columns.
-fn pick(rows: &[Row<'_>], columns: usize, lines: &[Line<'_>], notes: &mut Vec<String>) -> Result<Picked, Error> {
+fn pick(
+    rows: &[Row<'_>],
+    columns: usize,
+    lines: &[Line<'_>],
+    notes: &mut Vec<String>,
+) -> Result<Picked, Error> {
     let column = |k: usize| rows.iter().map(move |row| row.numbers[k].value);
     let constant = |k: usize| {
         let first = rows.first().map_or(0.0, |row| row.numbers[k].value);
         column(k).all(|v| (v - first).abs() <= 0.0)
     };
-    let counts_up = |k: usize| column(k).zip(column(k).skip(1)).all(|(a, b)| (b - a - 1.0).abs() <= 0.0);
+    let counts_up = |k: usize| {
+        column(k)
+            .zip(column(k).skip(1))
+            .all(|(a, b)| (b - a - 1.0).abs() <= 0.0)
+    };
     let rises = |k: usize| {
         let steps = || column(k).zip(column(k).skip(1));
         steps().all(|(a, b)| b >= a) || steps().all(|(a, b)| b <= a)
@@ -242,7 +301,11 @@ fn pick(rows: &[Row<'_>], columns: usize, lines: &[Line<'_>], notes: &mut Vec<St
         2 => vec![[0, 1]],
         3 => {
             if let Some(k) = [2, 0, 1].into_iter().find(|&k| constant(k) || counts_up(k)) {
-                let what = if constant(k) { "constant" } else { "a running number" };
+                let what = if constant(k) {
+                    "constant"
+                } else {
+                    "a running number"
+                };
                 notes.push(format!("Column {} left out: {what}.", k + 1));
                 vec![[[1, 2], [0, 2], [0, 1]][k]]
             } else if rises(0) {
@@ -256,15 +319,24 @@ fn pick(rows: &[Row<'_>], columns: usize, lines: &[Line<'_>], notes: &mut Vec<St
     };
     let Some(&[x, y]) = pairs.first() else {
         let line = rows.first().map_or(1, |row| row.line);
-        return Err(Error::Columns { at: place(lines, line), found: columns, usual: columns });
+        return Err(Error::Columns {
+            at: place(lines, line),
+            found: columns,
+            usual: columns,
+        });
     };
     let mut points = Vec::with_capacity(rows.len() * pairs.len());
     for [x, y] in &pairs {
-        points.extend(rows.iter().map(|row| Point { at: [row.numbers[*x].value, row.numbers[*y].value], line: row.line }));
+        points.extend(rows.iter().map(|row| Point {
+            at: [row.numbers[*x].value, row.numbers[*y].value],
+            line: row.line,
+        }));
     }
     let mut counted = None;
     if pairs.len() > 1 {
-        notes.push(format!("Layout: a table of {columns} columns, a side beside the other."));
+        notes.push(format!(
+            "Layout: a table of {columns} columns, a side beside the other."
+        ));
         counted = rows.first().map(|row| (rows.len(), row.line));
     }
     Ok((points, counted, [decimals(rows, x), decimals(rows, y)]))
@@ -275,5 +347,9 @@ fn pick(rows: &[Row<'_>], columns: usize, lines: &[Line<'_>], notes: &mut Vec<St
 fn decimals(rows: &[Row<'_>], k: usize) -> i32 {
     let numbers = || rows.iter().map(|row| row.numbers[k]);
     let largest = numbers().fold(0.0, |m: f64, n| m.max(n.value.abs()));
-    numbers().filter(|n| n.value.abs() >= 0.1 * largest).map(|n| n.decimals).max().unwrap_or(0)
+    numbers()
+        .filter(|n| n.value.abs() >= 0.1 * largest)
+        .map(|n| n.decimals)
+        .max()
+        .unwrap_or(0)
 }

@@ -68,7 +68,11 @@ pub(super) fn crossing(points: &[[f64; 2]], size: f64, unit: f64) -> Option<f64>
     let straight = p[0] + (q[0] - p[0]) * p[1] / (p[1] - q[1]);
     let curved = Nose::new(points, k, 100.0 * unit).x(0.0);
     // a polynomial that runs wild is no curve through the points
-    Some(if (curved - straight).abs() < gap { curved } else { straight })
+    Some(if (curved - straight).abs() < gap {
+        curved
+    } else {
+        straight
+    })
 }
 
 /// The point of the curve farthest from `from`, the middle of the trailing edge.
@@ -91,7 +95,10 @@ pub(super) fn farthest(points: &[[f64; 2]], from: [f64; 2], unit: f64) -> [f64; 
         let d = [p[0] - given[0], p[1] - given[1]];
         [d[0] * c + d[1] * s, d[1] * c - d[0] * s]
     };
-    let turned: Vec<[f64; 2]> = points[m.saturating_sub(200)..(m + 200).min(points.len())].iter().map(|&p| local(p)).collect();
+    let turned: Vec<[f64; 2]> = points[m.saturating_sub(200)..(m + 200).min(points.len())]
+        .iter()
+        .map(|&p| local(p))
+        .collect();
     let m = m.min(200);
     let (mut low, mut high) = (turned[m + 1][1], turned[m - 1][1]);
     if !(low < 0.0 && high > 0.0) {

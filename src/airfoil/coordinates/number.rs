@@ -31,7 +31,9 @@ pub(super) fn decimal_comma<'a>(lines: impl Iterator<Item = &'a str>) -> bool {
 /// The numbers of a line, or nothing where anything else is on it.
 pub(super) fn row(line: &str, comma: bool) -> Option<Vec<Number>> {
     let between = |c: char| {
-        c.is_whitespace() || matches!(c, ';' | '(' | ')' | '[' | ']' | '{' | '}' | '"') || (c == ',' && !comma)
+        c.is_whitespace()
+            || matches!(c, ';' | '(' | ')' | '[' | ']' | '{' | '}' | '"')
+            || (c == ',' && !comma)
     };
     let mut numbers = Vec::with_capacity(2);
     let mut known = false;
@@ -56,7 +58,11 @@ fn number(token: &str, comma: bool) -> Option<Number> {
     let mut power: Option<i32> = None;
     let mut negative = false;
     let mut before = b' ';
-    let simplified = if token.is_ascii() { None } else { Some(token.replace(['\u{2212}', '\u{2013}'], "-")) };
+    let simplified = if token.is_ascii() {
+        None
+    } else {
+        Some(token.replace(['\u{2212}', '\u{2013}'], "-"))
+    };
     let text = simplified.as_deref().unwrap_or(token);
     for &b in text.as_bytes() {
         let put = match b {
@@ -108,7 +114,14 @@ fn number(token: &str, comma: bool) -> Option<Number> {
 /// What programs print for a number that is none.
 fn not_finite(token: &str) -> Option<Number> {
     let bare = token.trim_start_matches(['+', '-']).to_ascii_lowercase();
-    let known = matches!(bare.as_str(), "nan" | "inf" | "infinity" | "1.#inf" | "1.#ind" | "1.#qnan" | "nanq")
-        || (bare.len() > 2 && bare.bytes().all(|b| b == b'*'));
-    known.then_some(Number { value: f64::NAN, decimals: 0, whole: false, padded: false })
+    let known = matches!(
+        bare.as_str(),
+        "nan" | "inf" | "infinity" | "1.#inf" | "1.#ind" | "1.#qnan" | "nanq"
+    ) || (bare.len() > 2 && bare.bytes().all(|b| b == b'*'));
+    known.then_some(Number {
+        value: f64::NAN,
+        decimals: 0,
+        whole: false,
+        padded: false,
+    })
 }

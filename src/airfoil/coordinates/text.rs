@@ -28,14 +28,20 @@ pub(super) struct Line<'a> {
 
 /// The place of line `number` (from 1).
 pub(super) fn place(lines: &[Line<'_>], number: usize) -> Place {
-    let text = number.checked_sub(1).and_then(|i| lines.get(i)).map_or("", |line| line.text);
+    let text = number
+        .checked_sub(1)
+        .and_then(|i| lines.get(i))
+        .map_or("", |line| line.text);
     Place::new(number, text)
 }
 
 /// The file's text, whatever its encoding: UTF-8 or UTF-16 with a byte-order mark, UTF-8, else Latin-1.
 pub(super) fn decode(bytes: &[u8], notes: &mut Vec<String>) -> Result<String, Error> {
     if bytes.len() > MAX_BYTES {
-        return Err(Error::TooLarge { at: Place::new(1, ""), bytes: bytes.len() });
+        return Err(Error::TooLarge {
+            at: Place::new(1, ""),
+            bytes: bytes.len(),
+        });
     }
     let text = match bytes {
         [0xef, 0xbb, 0xbf, rest @ ..] => {
@@ -48,12 +54,17 @@ pub(super) fn decode(bytes: &[u8], notes: &mut Vec<String>) -> Result<String, Er
     };
     let text = text.trim_end_matches(['\u{1a}', '\0']).to_owned();
     if text.chars().all(char::is_whitespace) {
-        return Err(Error::Empty { at: Place::new(1, "") });
+        return Err(Error::Empty {
+            at: Place::new(1, ""),
+        });
     }
-    let foreign = |c: char| (c < ' ' && !matches!(c, '\t' | '\n' | '\r' | '\u{b}' | '\u{c}')) || c == '\u{7f}';
+    let foreign =
+        |c: char| (c < ' ' && !matches!(c, '\t' | '\n' | '\r' | '\u{b}' | '\u{c}')) || c == '\u{7f}';
     let spoiled = split(&text).zip(1..).find(|(line, _)| line.contains(foreign));
     if let Some((line, number)) = spoiled {
-        return Err(Error::Binary { at: Place::new(number, line) });
+        return Err(Error::Binary {
+            at: Place::new(number, line),
+        });
     }
     Ok(text)
 }
@@ -79,13 +90,19 @@ fn sixteen_bit(bytes: &[u8], unit: fn([u8; 2]) -> u16, notes: &mut Vec<String>) 
 
 /// Lines ended by LF, CR LF or CR.
 fn split(text: &str) -> impl Iterator<Item = &str> {
-    text.split('\n').flat_map(|line| line.strip_suffix('\r').unwrap_or(line).split('\r'))
+    text.split('\n')
+        .flat_map(|line| line.strip_suffix('\r').unwrap_or(line).split('\r'))
 }
 
 /// All lines of the text with what they are.
 pub(super) fn lines(text: &str) -> Vec<Line<'_>> {
     let comma = number::decimal_comma(split(text));
-    split(text).map(|text| Line { text, kind: kind(text, comma) }).collect()
+    split(text)
+        .map(|text| Line {
+            text,
+            kind: kind(text, comma),
+        })
+        .collect()
 }
 
 /// What a line is, with a decimal comma or not.
@@ -94,17 +111,26 @@ fn kind(text: &str, comma: bool) -> Kind {
     if text.is_empty() {
         return Kind::Blank;
     }
-    let remark = ["#", "!", "%", ";", "//"].iter().find_map(|mark| text.strip_prefix(mark));
+    let remark = ["#", "!", "%", ";", "//"]
+        .iter()
+        .find_map(|mark| text.strip_prefix(mark));
     if let Some(remark) = remark {
-        return Kind::Remark(remark.trim_matches(|c: char| c.is_whitespace() || "#!%;/*-=".contains(c)).to_owned());
+        return Kind::Remark(
+            remark
+                .trim_matches(|c: char| c.is_whitespace() || "#!%;/*-=".contains(c))
+                .to_owned(),
+        );
     }
     if let Some(numbers) = number::row(text, comma) {
         return Kind::Numbers(numbers);
     }
     // a remark behind the numbers
-    let begins = text.char_indices().zip(text.chars().skip(1)).find_map(|((i, c), next)| {
-        (c.is_whitespace() && matches!(next, '#' | '!' | '%' | '/' | ';')).then_some(i)
-    });
+    let begins = text
+        .char_indices()
+        .zip(text.chars().skip(1))
+        .find_map(|((i, c), next)| {
+            (c.is_whitespace() && matches!(next, '#' | '!' | '%' | '/' | ';')).then_some(i)
+        });
     match begins.and_then(|i| number::row(&text[..i], comma)) {
         Some(numbers) if numbers.len() > 1 => Kind::Numbers(numbers),
         _ => Kind::Words,

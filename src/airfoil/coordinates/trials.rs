@@ -7,8 +7,14 @@ use crate::airfoil::coordinates::forms::{DECIMALS, Form, Layout, PLAIN, Style, f
 use crate::airfoil::coordinates::{Contour, MIN_SIDE, read};
 
 fn form() -> impl Strategy<Value = Form> {
-    (0.04..0.24_f64, 0.0..0.06_f64, 0.25..0.6_f64, any::<bool>())
-        .prop_map(|(thickness, camber, camber_at, open)| Form { thickness, camber, camber_at, open })
+    (0.04..0.24_f64, 0.0..0.06_f64, 0.25..0.6_f64, any::<bool>()).prop_map(
+        |(thickness, camber, camber_at, open)| Form {
+            thickness,
+            camber,
+            camber_at,
+            open,
+        },
+    )
 }
 
 /// A section's points; shown by what they came from.
@@ -29,7 +35,12 @@ fn case() -> impl Strategy<Value = Case> {
     let side = || (10..120_usize, prop::collection::vec(-0.3..0.3_f64, 7));
     (form(), [side(), side()]).prop_map(|(form, sides)| {
         let [upper, lower] = [0, 1].map(|k: usize| stations(sides[k].0, &sides[k].1));
-        Case { form, points: form.contour(&upper, &lower), nose: sides[0].0 + 1, sides }
+        Case {
+            form,
+            points: form.contour(&upper, &lower),
+            nose: sides[0].0 + 1,
+            sides,
+        }
     })
 }
 
@@ -56,28 +67,45 @@ fn style() -> impl Strategy<Value = Style> {
     let end = prop::sample::select(vec!["\n", "\r\n", "\r"]);
     let scale = prop::sample::select(vec![1.0, 100.0, 1000.0, 250.0, 10.0, 0.5]);
     (
-        (layout, any::<bool>(), scale, 0..6_usize, separator, any::<bool>(), end, title),
-        (0..5_usize, any::<bool>(), any::<bool>(), any::<bool>(), 0..3_usize),
+        (
+            layout,
+            any::<bool>(),
+            scale,
+            0..6_usize,
+            separator,
+            any::<bool>(),
+            end,
+            title,
+        ),
+        (
+            0..5_usize,
+            any::<bool>(),
+            any::<bool>(),
+            any::<bool>(),
+            0..3_usize,
+        ),
     )
-        .prop_map(|((layout, lower_first, scale, print, separator, comma, end, title), rest)| {
-            let (encoding, remarks, blanks, repeats, third) = rest;
-            Style {
-                layout,
-                lower_first,
-                scale,
-                print,
-                separator,
-                decimal_comma: comma && separator != "," && separator != ", ",
-                end,
-                title,
-                encoding,
-                remarks,
-                blanks,
-                repeats,
-                third,
-                ..PLAIN
-            }
-        })
+        .prop_map(
+            |((layout, lower_first, scale, print, separator, comma, end, title), rest)| {
+                let (encoding, remarks, blanks, repeats, third) = rest;
+                Style {
+                    layout,
+                    lower_first,
+                    scale,
+                    print,
+                    separator,
+                    decimal_comma: comma && separator != "," && separator != ", ",
+                    end,
+                    title,
+                    encoding,
+                    remarks,
+                    blanks,
+                    repeats,
+                    third,
+                    ..PLAIN
+                }
+            },
+        )
 }
 
 /// Every promise that a contour makes.
@@ -86,8 +114,14 @@ fn is_section(contour: &Contour) -> Result<(), TestCaseError> {
     prop_assert!(points.iter().flatten().all(|v| v.is_finite() && v.abs() < 2.0));
     prop_assert!(contour.upper().len() >= MIN_SIDE && contour.lower().len() >= MIN_SIDE);
     prop_assert!(points.windows(2).all(|p| p[0] != p[1]), "a repeated point");
-    let edge = [0.5 * (points[0][0] + points[n - 1][0]) - 1.0, 0.5 * (points[0][1] + points[n - 1][1])];
-    prop_assert!(edge[0].abs() < 1e-15 && edge[1].abs() < 1e-15, "trailing edge off by {edge:?}");
+    let edge = [
+        0.5 * (points[0][0] + points[n - 1][0]) - 1.0,
+        0.5 * (points[0][1] + points[n - 1][1]),
+    ];
+    prop_assert!(
+        edge[0].abs() < 1e-15 && edge[1].abs() < 1e-15,
+        "trailing edge off by {edge:?}"
+    );
     prop_assert!(points[0][1] >= points[n - 1][1]);
     prop_assert!(points.iter().all(|p| p[0] >= points[contour.nose][0]));
     Ok(())

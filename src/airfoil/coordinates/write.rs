@@ -20,7 +20,15 @@ pub fn write_blocks(title: &str, points: &[[f64; 2]], nose: usize, decimals: usi
     let nose = nose.min(points.len().saturating_sub(1));
     let upper = points.get(..=nose).unwrap_or(&[]);
     let lower = points.get(nose..).unwrap_or(&[]);
-    push(&mut out, format_args!("{:>width$}. {:>width$}.\n\n", upper.len(), lower.len(), width = decimals + 3));
+    push(
+        &mut out,
+        format_args!(
+            "{:>width$}. {:>width$}.\n\n",
+            upper.len(),
+            lower.len(),
+            width = decimals + 3
+        ),
+    );
     rows(&mut out, upper.iter().rev(), decimals);
     out.push('\n');
     rows(&mut out, lower.iter(), decimals);
@@ -33,7 +41,10 @@ fn push(out: &mut String, text: std::fmt::Arguments<'_>) {
 
 /// The title on one line.
 fn heading(title: &str) -> String {
-    let title: String = title.chars().map(|c| if c.is_control() { ' ' } else { c }).collect();
+    let title: String = title
+        .chars()
+        .map(|c| if c.is_control() { ' ' } else { c })
+        .collect();
     let title = title.trim();
     format!("{}\n", if title.is_empty() { "section" } else { title })
 }
@@ -44,7 +55,11 @@ fn rows<'a>(out: &mut String, points: impl Iterator<Item = &'a [f64; 2]>, decima
         let [x, y] = [x, y].map(|v| {
             let text = format!("{v:.decimals$}");
             // no negative zero
-            if text.bytes().all(|b| matches!(b, b'-' | b'0' | b'.')) { format!("{:.decimals$}", 0.0) } else { text }
+            if text.bytes().all(|b| matches!(b, b'-' | b'0' | b'.')) {
+                format!("{:.decimals$}", 0.0)
+            } else {
+                text
+            }
         });
         push(out, format_args!("{x:>width$} {y:>width$}\n"));
     }

@@ -42,7 +42,10 @@ pub(super) fn write_curve<W: Write>(
             let (multiplicities, knots) = distinct(curve.knot_vec());
             out.rational_curve(curve.degree(), &points, (&multiplicities, &knots), &weights)
         }
-        Curve::IntersectionCurve(_) => Err(Error::Curve { face: face(), kind: "an intersection curve" }),
+        Curve::IntersectionCurve(_) => Err(Error::Curve {
+            face: face(),
+            kind: "an intersection curve",
+        }),
     }
 }
 
@@ -60,7 +63,10 @@ pub(super) fn write_surface<W: Write>(
                 return write_plane(out, units, &plane, face);
             }
             let net = surface.control_points();
-            let net = net.iter().map(|row| write_points(out, units, row)).collect::<Result<Vec<_>, _>>()?;
+            let net = net
+                .iter()
+                .map(|row| write_points(out, units, row))
+                .collect::<Result<Vec<_>, _>>()?;
             let (u, v) = (distinct(surface.uknot_vec()), distinct(surface.vknot_vec()));
             out.surface(surface.degrees(), &net, (&u.0, &u.1), (&v.0, &v.1))
         }
@@ -75,7 +81,10 @@ pub(super) fn write_surface<W: Write>(
             let (u, v) = (distinct(surface.uknot_vec()), distinct(surface.vknot_vec()));
             out.rational_surface(surface.degrees(), &net, (&u.0, &u.1), (&v.0, &v.1), &weights)
         }
-        Surface::RevolutedCurve(_) => Err(Error::Surface { face: face(), kind: "a surface of revolution" }),
+        Surface::RevolutedCurve(_) => Err(Error::Surface {
+            face: face(),
+            kind: "a surface of revolution",
+        }),
     }
 }
 
@@ -90,7 +99,9 @@ fn write_line<W: Write>(
     let along = end - start;
     let length = along.magnitude();
     if length == 0.0 {
-        return Err(Error::NoLength { place: format!("an edge of face `{}`", face()) });
+        return Err(Error::NoLength {
+            place: format!("an edge of face `{}`", face()),
+        });
     }
     let point = write_point(out, units, start)?;
     let direction = out.direction((along / length).into())?;
@@ -117,7 +128,10 @@ fn write_plane<W: Write>(
 }
 
 fn write_points<W: Write>(out: &mut Exchange<W>, units: Units, points: &[Point3]) -> Result<Vec<Id>, Error> {
-    points.iter().map(|&point| write_point(out, units, point)).collect()
+    points
+        .iter()
+        .map(|&point| write_point(out, units, point))
+        .collect()
 }
 
 /// A control point in homogeneous coordinates as point and weight.
@@ -131,7 +145,9 @@ fn unweighted(p: Vector4) -> (Point3, f64) {
 /// through their mean, in turn on either side of it.
 fn flat(surface: &BSplineSurface<Point3>) -> Option<Plane> {
     let net = surface.control_points();
-    let ([a, b], [d, c]) = (net.first()?.as_slice(), net.get(1)?.as_slice()) else { return None };
+    let ([a, b], [d, c]) = (net.first()?.as_slice(), net.get(1)?.as_slice()) else {
+        return None;
+    };
     if net.len() != 2 {
         return None;
     }
@@ -144,7 +160,11 @@ fn flat(surface: &BSplineSurface<Point3>) -> Option<Plane> {
     }
     let x = x.normalize();
     let origin = *a + ((*b - *a) + (*c - *a) + (*d - *a)) / 4.0;
-    Some(Plane::new(origin, origin + x, origin + normal.cross(x).normalize()))
+    Some(Plane::new(
+        origin,
+        origin + x,
+        origin + normal.cross(x).normalize(),
+    ))
 }
 
 /// The multiplicities and the distinct values of a knot vector. Only equal knots are one: the values stay exact.

@@ -142,9 +142,19 @@ pub fn write(document: &Document<'_>, out: &mut impl Write) -> Result<(), Error>
     let mut out = begin(document, BufWriter::new(out))?;
     let contexts = Contexts::write(&mut out, document.schema)?;
     let units = Units::write(&mut out, document.unit)?;
-    let mut writer = Writer { document, contexts, units, out, presentation: Presentation::default() };
+    let mut writer = Writer {
+        document,
+        contexts,
+        units,
+        out,
+        presentation: Presentation::default(),
+    };
     let whole = writer.write_shape()?;
-    let Writer { mut out, presentation, .. } = writer;
+    let Writer {
+        mut out,
+        presentation,
+        ..
+    } = writer;
     presentation.write(&mut out, units)?;
     write_attributes(&mut out, units, document.schema, whole, document.attributes)?;
     out.end()
@@ -162,7 +172,11 @@ fn check(document: &Document<'_>) -> Result<(), Error> {
     for Attribute { name, value } in document.attributes {
         let Value::Text(text) = value else { continue };
         if let Some((i, character)) = text.chars().enumerate().find(|(_, c)| !matches!(c, ' '..='~')) {
-            return Err(Error::AttributeText { name: name.clone(), character, at: i + 1 });
+            return Err(Error::AttributeText {
+                name: name.clone(),
+                character,
+                at: i + 1,
+            });
         }
     }
     Ok(())
@@ -176,7 +190,10 @@ fn begin<W: Write>(document: &Document<'_>, out: W) -> Result<Exchange<W>, Error
         "CAx-IF Rec.Pracs.---Geometric and Assembly Validation Properties---4.6---2023-04-21";
     const VERSION: &str = concat!(env!("CARGO_PKG_NAME"), " ", env!("CARGO_PKG_VERSION"));
     let characters: Vec<char> = document.description.chars().collect();
-    let mut description: Vec<String> = characters.chunks(LONGEST).map(|part| part.iter().collect()).collect();
+    let mut description: Vec<String> = characters
+        .chunks(LONGEST)
+        .map(|part| part.iter().collect())
+        .collect();
     description.push(PRACTICE.to_owned());
     let description: Vec<&str> = description.iter().map(String::as_str).collect();
     let name: String = document.name.chars().take(LONGEST).collect();
@@ -185,8 +202,15 @@ fn begin<W: Write>(document: &Document<'_>, out: W) -> Result<Exchange<W>, Error
         Schema::Ap214 => "AUTOMOTIVE_DESIGN { 1 0 10303 214 1 1 1 1 }",
     }];
     let program = env!("CARGO_PKG_NAME");
-    let file_name: [&dyn Parameter; 7] =
-        [&name.as_str(), &document.time_stamp, &[""], &[""], &VERSION, &program, &""];
+    let file_name: [&dyn Parameter; 7] = [
+        &name.as_str(),
+        &document.time_stamp,
+        &[""],
+        &[""],
+        &VERSION,
+        &program,
+        &"",
+    ];
     let header = [
         ("FILE_DESCRIPTION", &[&description as &dyn Parameter, &"2;1"][..]),
         ("FILE_NAME", &file_name[..]),
@@ -210,11 +234,22 @@ impl<W: Write> Writer<'_, W> {
         let document = self.document;
         let lines = match document.reference_form {
             ReferenceForm::None => Vec::new(),
-            _ => write_reference(&mut self.out, self.units, document.reference, &mut self.presentation)?,
+            _ => write_reference(
+                &mut self.out,
+                self.units,
+                document.reference,
+                &mut self.presentation,
+            )?,
         };
         let as_parts = document.reference_form == ReferenceForm::Parts && !lines.is_empty();
         if let ([solid], [properties], false) = (document.solids, document.properties, as_parts) {
-            let part = self.part(document.id, document.name, document.description, solid, properties)?;
+            let part = self.part(
+                document.id,
+                document.name,
+                document.description,
+                solid,
+                properties,
+            )?;
             self.relate(&lines, part.representation)?;
             return Ok(part.product);
         }
@@ -229,7 +264,12 @@ impl<W: Write> Writer<'_, W> {
                 components.push(self.line_part(&id, line)?);
             }
         }
-        let Document { id, name, description, .. } = *document;
+        let Document {
+            id,
+            name,
+            description,
+            ..
+        } = *document;
         let whole = Product::write(&mut self.out, self.contexts, id, name, description)?;
         let representation = write_assembly(&mut self.out, self.units, whole, name, &components)?;
         if !as_parts {
@@ -254,7 +294,12 @@ impl<W: Write> Writer<'_, W> {
         let representation = out.solid_representation(&solid.name, [origin, body], self.units.context)?;
         out.shape_of(product.shape, representation)?;
         write_properties(out, self.units, product, properties)?;
-        Ok(Component { name: name.to_owned(), product, representation, origin })
+        Ok(Component {
+            name: name.to_owned(),
+            product,
+            representation,
+            origin,
+        })
     }
 
     /// Writes a part that is a reference line or point.
@@ -265,7 +310,12 @@ impl<W: Write> Writer<'_, W> {
         let set = out.curve_set(line.name, &line.items)?;
         let representation = out.wireframe_representation(line.name, &[set, origin], self.units.context)?;
         out.shape_of(product.shape, representation)?;
-        Ok(Component { name: line.name.to_owned(), product, representation, origin })
+        Ok(Component {
+            name: line.name.to_owned(),
+            product,
+            representation,
+            origin,
+        })
     }
 
     /// Relates the reference geometry to a shape, as construction geometry, as a wireframe, or both.

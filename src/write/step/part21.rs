@@ -183,7 +183,11 @@ pub(super) struct Exchange<W> {
 impl<W: Write> Exchange<W> {
     /// Writes the header section and opens the data section.
     pub(super) fn begin(out: W, header: &[Record<'_>]) -> Result<Self, Error> {
-        let mut exchange = Self { out, line: String::new(), last: 0 };
+        let mut exchange = Self {
+            out,
+            line: String::new(),
+            last: 0,
+        };
         exchange.out.write_all(b"ISO-10303-21;\nHEADER;\n")?;
         for record in header {
             exchange.line.clear();
@@ -230,7 +234,10 @@ impl<W: Write> Exchange<W> {
                 self.line.push(',');
             }
             let put = parameter.put(&mut self.line);
-            put.map_err(|value| Error::NotFinite { entity: keyword, value })?;
+            put.map_err(|value| Error::NotFinite {
+                entity: keyword,
+                value,
+            })?;
         }
         self.line.push(')');
         Ok(())

@@ -18,12 +18,16 @@ impl Contexts {
     /// Writes the application context and protocol of a schema and the contexts of products and their definitions.
     pub(super) fn write<W: Write>(out: &mut Exchange<W>, schema: Schema) -> Result<Self, Error> {
         let (application, protocol, year) = match schema {
-            Schema::Ap242 => {
-                ("managed model based 3d engineering", "ap242_managed_model_based_3d_engineering", 2014)
-            }
-            Schema::Ap214 => {
-                ("core data for automotive mechanical design processes", "automotive_design", 2000)
-            }
+            Schema::Ap242 => (
+                "managed model based 3d engineering",
+                "ap242_managed_model_based_3d_engineering",
+                2014,
+            ),
+            Schema::Ap214 => (
+                "core data for automotive mechanical design processes",
+                "automotive_design",
+                2000,
+            ),
         };
         let context = out.application_context(application)?;
         out.application_protocol(protocol, year, context)?;

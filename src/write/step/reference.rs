@@ -32,13 +32,19 @@ pub(super) fn write_reference<'a, W: Write>(
         for &item in &items {
             presentation.curve(out, units, &line.name, line.kind, item)?;
         }
-        drawn.push(Drawn { name: &line.name, items });
+        drawn.push(Drawn {
+            name: &line.name,
+            items,
+        });
     }
     for point in &reference.points {
         let item = out.cartesian_point(&point.name, units.to_point(point.point))?;
         presentation.point(out, units, &point.name, item)?;
         presentation.put_on(POINT_LAYER, item);
-        drawn.push(Drawn { name: &point.name, items: vec![item] });
+        drawn.push(Drawn {
+            name: &point.name,
+            items: vec![item],
+        });
     }
     Ok(drawn)
 }
@@ -48,13 +54,17 @@ pub(super) fn write_reference<'a, W: Write>(
 fn write_line<W: Write>(out: &mut Exchange<W>, units: Units, line: &ReferenceLine) -> Result<Vec<Id>, Error> {
     let point = |out: &mut Exchange<W>, p: Point3<f64>| out.cartesian_point("", units.to_point(p));
     let mut items = Vec::new();
-    let Some((&first, rest)) = line.points.split_first() else { return Ok(items) };
+    let Some((&first, rest)) = line.points.split_first() else {
+        return Ok(items);
+    };
     let (mut from, mut start) = (first, point(out, first)?);
     for &to in rest {
         let along = to - from;
         let length = along.norm();
         if length == 0.0 {
-            return Err(Error::NoLength { place: format!("reference line `{}`", line.name) });
+            return Err(Error::NoLength {
+                place: format!("reference line `{}`", line.name),
+            });
         }
         let end = point(out, to)?;
         let direction = out.direction((along / length).into())?;

@@ -23,13 +23,25 @@ pub(super) fn write_solid<W: Write>(
 ) -> Result<Id, Error> {
     let [shell] = &solid.shape.boundaries()[..] else {
         let shells = solid.shape.boundaries().len();
-        return Err(Error::Shells { solid: solid.name.clone(), shells });
+        return Err(Error::Shells {
+            solid: solid.name.clone(),
+            shells,
+        });
     };
     if shell.len() != solid.faces.len() {
         let (faces, labels) = (shell.len(), solid.faces.len());
-        return Err(Error::Labels { solid: solid.name.clone(), faces, labels });
+        return Err(Error::Labels {
+            solid: solid.name.clone(),
+            faces,
+            labels,
+        });
     }
-    let mut topology = Topology { out, units, vertices: HashMap::new(), edges: HashMap::new() };
+    let mut topology = Topology {
+        out,
+        units,
+        vertices: HashMap::new(),
+        edges: HashMap::new(),
+    };
     let mut faces = Vec::with_capacity(shell.len());
     for (face, label) in shell.iter().zip(&solid.faces) {
         faces.push(topology.face(face, *label)?);

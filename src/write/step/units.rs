@@ -44,7 +44,14 @@ impl Units {
         let area = out.derived_unit(square)?;
         let cube = out.unit_power(length, 3.0)?;
         let volume = out.derived_unit(cube)?;
-        Ok(Self { context, length, area, volume, radian, millimetres })
+        Ok(Self {
+            context,
+            length,
+            area,
+            volume,
+            radian,
+            millimetres,
+        })
     }
 
     /// Writes the degree.
