@@ -18,6 +18,8 @@ mod property;
 mod reference;
 mod shape;
 mod style;
+#[cfg(test)]
+mod test;
 mod text;
 mod units;
 
@@ -35,7 +37,7 @@ use part21::{Exchange, Id, Parameter};
 use presentation::Presentation;
 use product::{Component, Contexts, Product, write_assembly, write_origin};
 use property::{write_attributes, write_properties};
-use reference::{Drawn, write_reference};
+use reference::write_reference;
 use shape::write_solid;
 use units::Units;
 
@@ -91,6 +93,16 @@ pub enum ReferenceForm {
     Parts,
     /// Not at all.
     None,
+}
+
+impl ReferenceForm {
+    const fn has_construction(self) -> bool {
+        matches!(self, Self::Both | Self::Construction)
+    }
+
+    const fn has_wireframe(self) -> bool {
+        matches!(self, Self::Both | Self::Wireframe)
+    }
 }
 
 /// What a reader should find when it measures a solid.
@@ -219,6 +231,9 @@ fn begin<W: Write>(document: &Document<'_>, out: W) -> Result<Exchange<W>, Error
     Exchange::begin(out, &header)
 }
 
+/// Name of the reference geometry as a whole.
+const REFERENCE: &str = "reference geometry";
+
 /// A document on its way out.
 struct Writer<'a, W> {
     document: &'a Document<'a>,
@@ -241,8 +256,15 @@ impl<W: Write> Writer<'_, W> {
                 &mut self.presentation,
             )?,
         };
-        let as_parts = document.reference_form == ReferenceForm::Parts && !lines.is_empty();
-        if let ([solid], [properties], false) = (document.solids, document.properties, as_parts) {
+        let items: Vec<Id> = lines.iter().flat_map(|line| line.items.iter().copied()).collect();
+        let form = if items.is_empty() {
+            ReferenceForm::None
+        } else {
+            document.reference_form
+        };
+        if let ([solid], [properties]) = (document.solids, document.properties)
+            && form != ReferenceForm::Parts
+        {
             let part = self.part(
                 document.id,
                 document.name,
@@ -250,7 +272,12 @@ impl<W: Write> Writer<'_, W> {
                 solid,
                 properties,
             )?;
-            self.relate(&lines, part.representation)?;
+            if form.has_construction() {
+                self.add_construction(&items, part.representation)?;
+            }
+            if form.has_wireframe() {
+                self.add_wireframe(&items, part.representation)?;
+            }
             return Ok(part.product);
         }
         let mut components = Vec::new();
@@ -258,11 +285,15 @@ impl<W: Write> Writer<'_, W> {
             let id = format!("{} / solid {}", document.id, i + 1);
             components.push(self.part(&id, &solid.name, "", solid, properties)?);
         }
-        if as_parts {
+        if form == ReferenceForm::Parts {
             for (i, line) in lines.iter().enumerate() {
                 let id = format!("{} / reference {}", document.id, i + 1);
-                components.push(self.line_part(&id, line)?);
+                components.push(self.line_part(&id, line.name, &line.items)?);
             }
+        } else if form.has_wireframe() {
+            // an assembly has no shape of its own beside its parts, so the wireframe is one of them
+            let id = format!("{} / reference", document.id);
+            components.push(self.line_part(&id, REFERENCE, &items)?);
         }
         let Document {
             id,
@@ -272,8 +303,8 @@ impl<W: Write> Writer<'_, W> {
         } = *document;
         let whole = Product::write(&mut self.out, self.contexts, id, name, description)?;
         let representation = write_assembly(&mut self.out, self.units, whole, name, &components)?;
-        if !as_parts {
-            self.relate(&lines, representation)?;
+        if form.has_construction() {
+            self.add_construction(&items, representation)?;
         }
         Ok(whole)
     }
@@ -302,45 +333,38 @@ impl<W: Write> Writer<'_, W> {
         })
     }
 
-    /// Writes a part that is a reference line or point.
-    fn line_part(&mut self, id: &str, line: &Drawn<'_>) -> Result<Component, Error> {
+    /// Writes a part that is reference geometry.
+    fn line_part(&mut self, id: &str, name: &str, items: &[Id]) -> Result<Component, Error> {
         let out = &mut self.out;
-        let product = Product::write(out, self.contexts, id, line.name, "")?;
+        let product = Product::write(out, self.contexts, id, name, "")?;
         let origin = write_origin(out)?;
-        let set = out.curve_set(line.name, &line.items)?;
-        let representation = out.wireframe_representation(line.name, &[set, origin], self.units.context)?;
+        let set = out.curve_set(name, items)?;
+        let representation = out.wireframe_representation(name, &[set, origin], self.units.context)?;
         out.shape_of(product.shape, representation)?;
         Ok(Component {
-            name: line.name.to_owned(),
+            name: name.to_owned(),
             product,
             representation,
             origin,
         })
     }
 
-    /// Relates the reference geometry to a shape, as construction geometry, as a wireframe, or both.
-    fn relate(&mut self, lines: &[Drawn<'_>], shape: Id) -> Result<(), Error> {
-        const NAME: &str = "reference geometry";
-        let items: Vec<Id> = lines.iter().flat_map(|line| line.items.iter().copied()).collect();
-        if items.is_empty() {
-            return Ok(());
-        }
-        let (construction, wireframe) = match self.document.reference_form {
-            ReferenceForm::Both => (true, true),
-            ReferenceForm::Construction => (true, false),
-            ReferenceForm::Wireframe => (false, true),
-            ReferenceForm::Parts | ReferenceForm::None => (false, false),
-        };
-        let (out, context) = (&mut self.out, self.units.context);
-        if construction {
-            let construction = out.construction_representation(NAME, &items, context)?;
-            out.construction_of(NAME, shape, construction)?;
-        }
-        if wireframe {
-            let set = out.curve_set(NAME, &items)?;
-            let wireframe = out.wireframe_representation(NAME, &[set], context)?;
-            out.wireframe_of(NAME, shape, wireframe)?;
-        }
+    /// Adds reference geometry to a shape as its construction geometry.
+    fn add_construction(&mut self, items: &[Id], shape: Id) -> Result<(), Error> {
+        let construction = self
+            .out
+            .construction_representation(REFERENCE, items, self.units.context)?;
+        self.out.construction_of(REFERENCE, shape, construction)?;
+        Ok(())
+    }
+
+    /// Adds reference geometry to a shape as a wireframe beside it.
+    fn add_wireframe(&mut self, items: &[Id], shape: Id) -> Result<(), Error> {
+        let set = self.out.curve_set(REFERENCE, items)?;
+        let wireframe = self
+            .out
+            .wireframe_representation(REFERENCE, &[set], self.units.context)?;
+        self.out.wireframe_of(REFERENCE, shape, wireframe)?;
         Ok(())
     }
 }
