@@ -194,7 +194,7 @@ fn check(document: &Document<'_>) -> Result<(), Error> {
     Ok(())
 }
 
-/// Writes the header. Its strings hold at most 256 characters (ISO 10303-21:2002, 8.2): a description is cut into
+/// Writes the header. Its strings hold at most 256 characters (ISO 10303-21:2002): a description is cut into
 /// several, a name is cut off (it is whole in the product).
 fn begin<W: Write>(document: &Document<'_>, out: W) -> Result<Exchange<W>, Error> {
     const LONGEST: usize = 256;

@@ -1,7 +1,7 @@
 //! The style sheet: layers, colours and line fonts.
 //!
-//! Kinds of lines differ in lightness as well as in hue, and in their fonts, so that they can be told apart with any
-//! colour vision and in black and white. Red and green are never the only difference.
+//! Kinds of lines can be told apart without seeing red from green or blue from yellow: any two are at least ten units
+//! of CIELAB apart without a* and without b*, and two with the same font differ by ten in lightness.
 
 use crate::planform::LineKind;
 use crate::solid::FaceKind;
@@ -41,7 +41,7 @@ pub(super) const POINT_LAYER: Layer = Layer {
 };
 
 /// Colour of reference points, sRGB.
-pub(super) const POINT_COLOUR: [f64; 3] = [0.55, 0.05, 0.40];
+pub(super) const POINT_COLOUR: [f64; 3] = [0.65, 0.10, 0.48];
 
 /// Size of the marker of a reference point \[mm\].
 pub(super) const POINT_SIZE: f64 = 4.0;
@@ -70,14 +70,14 @@ pub(super) const fn line_style(kind: LineKind) -> LineStyle {
         LineKind::QuarterChord => (
             "QUARTER_CHORD_LINE",
             "quarter-chord lines",
-            [0.85, 0.45, 0.05],
+            [0.75, 0.33, 0.05],
             "chain",
             0.25,
         ),
         LineKind::MeanAerodynamicChord => (
             "MEAN_AERODYNAMIC_CHORD",
             "mean aerodynamic chords",
-            [0.55, 0.05, 0.40],
+            [0.65, 0.10, 0.48],
             "continuous",
             0.5,
         ),
@@ -91,21 +91,21 @@ pub(super) const fn line_style(kind: LineKind) -> LineStyle {
         LineKind::Centreline => (
             "CENTRELINE",
             "centreline of the aircraft",
-            [0.20, 0.20, 0.20],
+            [0.10, 0.10, 0.10],
             "chain double dash",
             0.25,
         ),
         LineKind::TwistAxis => (
             "TWIST_AXIS",
             "line that the sections turn about",
-            [0.05, 0.45, 0.45],
+            [0.00, 0.50, 0.45],
             "dotted",
             0.25,
         ),
         LineKind::Custom => (
             "CONSTRUCTION_LINE",
             "spars, hinge lines and the like",
-            [0.70, 0.58, 0.10],
+            [0.80, 0.68, 0.15],
             "dashed",
             0.35,
         ),
@@ -115,5 +115,62 @@ pub(super) const fn line_style(kind: LineKind) -> LineStyle {
         colour,
         font,
         width,
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::line_style;
+    use crate::planform::LineKind;
+
+    /// CIELAB under D65 (CIE 15) of an sRGB colour (IEC 61966-2-1).
+    fn lab(rgb: [f64; 3]) -> [f64; 3] {
+        let linear = |x: f64| {
+            if x <= 0.04045 {
+                x / 12.92
+            } else {
+                ((x + 0.055) / 1.055).powf(2.4)
+            }
+        };
+        let [r, g, b] = rgb.map(linear);
+        let root = |t: f64| {
+            if t > 216.0 / 24389.0 {
+                t.cbrt()
+            } else {
+                (24389.0 / 27.0 * t + 16.0) / 116.0
+            }
+        };
+        let x = root((0.4124564 * r + 0.3575761 * g + 0.1804375 * b) / 0.95047);
+        let y = root(0.2126729 * r + 0.7151522 * g + 0.0721750 * b);
+        let z = root((0.0193339 * r + 0.1191920 * g + 0.9503041 * b) / 1.08883);
+        [116.0 * y - 16.0, 500.0 * (x - y), 200.0 * (y - z)]
+    }
+
+    #[test]
+    fn kinds_of_lines_can_be_told_apart_with_any_colour_vision() {
+        use LineKind::{Centreline, Chord, Custom, MeanAerodynamicChord, Outline, QuarterChord, TwistAxis};
+        let kinds = [
+            Outline,
+            QuarterChord,
+            MeanAerodynamicChord,
+            Chord,
+            Centreline,
+            TwistAxis,
+            Custom,
+        ];
+        for (i, one) in kinds.into_iter().enumerate() {
+            for other in kinds.into_iter().skip(i + 1) {
+                let (p, q) = (line_style(one), line_style(other));
+                let (a, b) = (lab(p.colour), lab(q.colour));
+                let [light, red_green, yellow_blue] = [0, 1, 2].map(|k| (a[k] - b[k]).abs());
+                assert!(light.hypot(yellow_blue) >= 10.0, "{one:?} {other:?} without a*");
+                assert!(light.hypot(red_green) >= 10.0, "{one:?} {other:?} without b*");
+                assert!(
+                    p.font != q.font || light >= 10.0,
+                    "{one:?} {other:?} in black and white"
+                );
+                assert_ne!(p.layer, q.layer);
+            }
+        }
     }
 }

@@ -1,6 +1,6 @@
 //! Part 21's strings and real numbers.
 //!
-//! ISO 10303-21:2002, 6.3: strings hold the characters from space to `~`, an apostrophe and a reverse solidus doubled;
+//! ISO 10303-21:2002: strings hold the characters from space to `~`, an apostrophe and a reverse solidus doubled;
 //! everything else stands in `\X2\` (four hexadecimal digits a character) or `\X4\` (eight), closed by `\X0\`. A real
 //! number always has a decimal point, and its exponent a capital E.
 

@@ -76,16 +76,8 @@ impl Half {
     /// The solid.
     pub(crate) fn build(&self) -> Solid {
         let last = Self::COLUMNS - 1;
-        let corner = |column, up, tip| Vertex::new(self.point(column, up, tip));
-        let [nose, upper, lower] = [false, true]
-            .map(|tip| {
-                [
-                    corner(0, 0.0, tip),
-                    corner(last, 1.0, tip),
-                    corner(last, -1.0, tip),
-                ]
-            })
-            .map_rows();
+        let ends = |column, up| [false, true].map(|tip| Vertex::new(self.point(column, up, tip)));
+        let (nose, upper, lower) = (ends(0, 0.0), ends(last, 1.0), ends(last, -1.0));
         let line = |a: &Vertex, b: &Vertex| Edge::new(a, b, Curve::Line(Line(a.point(), b.point())));
         let tops = [0, 1].map(|i| Edge::new(&nose[i], &upper[i], self.curve(1.0, i == 1)));
         let bottoms = [0, 1].map(|i| Edge::new(&nose[i], &lower[i], self.curve(-1.0, i == 1)));
@@ -96,13 +88,12 @@ impl Half {
         let base_net = vec![vec![p(0, &upper), p(1, &upper)], vec![p(0, &lower), p(1, &lower)]];
         let linear = || KnotVec::bezier_knot(1);
         let base = Surface::BSplineSurface(BSplineSurface::new((linear(), linear()), base_net));
-        let side = if self.side == Side::Port { -1.0 } else { 1.0 };
         let cap = |o: Corner, u: [f64; 3], v: [f64; 3]| {
             let add = |d: [f64; 3]| Corner::new(o.x + d[0], o.y + d[1], o.z + d[2]);
             Surface::Plane(Plane::new(o, add(u), add(v)))
         };
         let (x, z) = ([1.0, 0.0, 0.0], [0.0, 0.0, 1.0]);
-        let ends = |i: usize, reverse: bool| {
+        let around_cap = |i: usize, reverse: bool| {
             let (top, base, bottom) = (tops[i].clone(), bases[i].clone(), bottoms[i].inverse());
             let edges = vec![top, base, bottom];
             if reverse {
@@ -119,16 +110,16 @@ impl Half {
             face(around(&tops, &upper_line, &nose_line), self.skin(1.0)),
             face(around(&bottoms, &lower_line, &nose_line), self.skin(-1.0)).inverse(),
             face(around(&bases, &lower_line, &upper_line), base),
-            face(ends(0, true), cap(p(0, &nose), x, z)),
-            face(ends(1, false), cap(p(1, &nose), z, x)),
+            face(around_cap(0, true), cap(p(0, &nose), x, z)),
+            face(around_cap(1, false), cap(p(1, &nose), z, x)),
         ];
-        if side < 0.0 {
+        if self.side == Side::Port {
             // mirroring turns every parametric normal inward; the caps' axes are not mirrored, but exchange their parts
             for face in &mut faces[..3] {
                 face.invert();
             }
-            faces[3] = face(ends(0, false), cap(p(0, &nose), z, x));
-            faces[4] = face(ends(1, true), cap(p(1, &nose), x, z));
+            faces[3] = face(around_cap(0, false), cap(p(0, &nose), z, x));
+            faces[4] = face(around_cap(1, true), cap(p(1, &nose), x, z));
         }
         let kinds = [
             FaceKind::Upper,
@@ -162,17 +153,6 @@ impl Half {
 fn weighted(p: Corner, column: usize) -> Vector4 {
     let w = 1.0 + column as f64 / 40.0;
     Vector4::new(p.x * w, p.y * w, p.z * w, w)
-}
-
-trait Rows<T> {
-    fn map_rows(self) -> [[T; 2]; 3];
-}
-
-impl<T> Rows<T> for [[T; 3]; 2] {
-    fn map_rows(self) -> [[T; 2]; 3] {
-        let [[a, b, c], [d, e, f]] = self;
-        [[a, d], [b, e], [c, f]]
-    }
 }
 
 /// Everything that a [`Document`] borrows.
