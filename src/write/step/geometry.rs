@@ -182,3 +182,51 @@ fn distinct(knots: &KnotVec) -> (Vec<usize>, Vec<f64>) {
     }
     (multiplicities, values)
 }
+
+#[cfg(test)]
+mod tests {
+    use super::{distinct, flat};
+    use truck_modeling::{BSplineSurface, InnerSpace, KnotVec, Point3, Vector3};
+
+    /// A bilinear patch, 300 by 2 mm in the plane x = 100, one corner off it by `off` \[mm\].
+    fn patch(off: f64) -> BSplineSurface<Point3> {
+        let row = |z: f64, off: f64| vec![Point3::new(100.0, 0.0, z), Point3::new(100.0 + off, 300.0, z)];
+        let knots = || KnotVec::bezier_knot(1);
+        BSplineSurface::new((knots(), knots()), vec![row(1.0, 0.0), row(-1.0, off)])
+    }
+
+    #[test]
+    fn only_a_patch_within_a_billionth_of_a_millimetre_is_a_plane() {
+        // a corner that is off by d leaves each corner d/4 from the mean plane
+        for (off, is_flat) in [
+            (0.0, true),
+            (3e-9, true),
+            (5e-9, false),
+            (1e-3, false),
+            (1.0, false),
+        ] {
+            let plane = flat(&patch(off));
+            assert_eq!(plane.is_some(), is_flat, "{off}");
+            if let Some(plane) = plane {
+                // down times to starboard is aft: the patch's own normal
+                assert!((plane.normal() - Vector3::unit_x()).magnitude() < 1e-9);
+            }
+        }
+    }
+
+    #[test]
+    fn a_patch_without_area_is_no_plane() {
+        let point = Point3::new(1.0, 2.0, 3.0);
+        let knots = || KnotVec::bezier_knot(1);
+        assert!(flat(&BSplineSurface::new((knots(), knots()), vec![vec![point; 2]; 2])).is_none());
+    }
+
+    #[test]
+    fn only_equal_knots_are_one() {
+        let knots = KnotVec::from(vec![0.0, 0.0, 0.5, 0.5 + 1e-9, 1.0, 1.0]);
+        assert_eq!(
+            distinct(&knots),
+            (vec![2, 1, 1, 2], vec![0.0, 0.5, 0.5 + 1e-9, 1.0])
+        );
+    }
+}
