@@ -101,10 +101,8 @@ fn enclose(points: &[[f64; 2]], piece: Piece, boxes: &mut [Box2]) -> Box2 {
             high: [f64::NEG_INFINITY; 2],
         };
         for p in &points[piece.from..=piece.to] {
-            for k in 0..2 {
-                all.low[k] = all.low[k].min(p[k]);
-                all.high[k] = all.high[k].max(p[k]);
-            }
+            all.low = [all.low[0].min(p[0]), all.low[1].min(p[1])];
+            all.high = [all.high[0].max(p[0]), all.high[1].max(p[1])];
         }
         all
     } else {

@@ -5,8 +5,8 @@ use crate::airfoil::coordinates::nose;
 use crate::airfoil::coordinates::order::Run;
 use crate::airfoil::coordinates::text::{Line, place};
 
-/// Trailing edge this near the file's own x axis, and curve's crossing of that axis this near its foremost point: the
-/// file's axis is the chord line \[chord\].
+/// The file's axis is the chord line where the trailing edge is this near to it, and the curve crosses it this near to
+/// the origin or to the foremost point \[chord\].
 const EDGE_NEAR: f64 = 2e-3;
 const NOSE_NEAR: f64 = 5e-3;
 
@@ -56,7 +56,8 @@ pub(super) fn normalise(run: &Run, lines: &[Line<'_>], notes: &mut Vec<String>) 
     let raw_unit = 10_f64.powi(-run.decimals[1].clamp(-12, 17));
     let foremost = raw.iter().map(|p| p[0]).fold(f64::INFINITY, f64::min);
     let own = if edge[1].abs() <= EDGE_NEAR * size {
-        nose::crossing(&raw, size, raw_unit.min(1e-3 * size)).filter(|x| *x <= foremost + NOSE_NEAR * size)
+        nose::crossing(&raw, size, raw_unit.min(1e-3 * size))
+            .filter(|x| (x - foremost).min(x.abs()) <= NOSE_NEAR * size)
     } else {
         None
     };

@@ -10,6 +10,7 @@
 
 mod check;
 mod crossing;
+mod ends;
 mod error;
 mod frame;
 mod layout;
@@ -21,6 +22,8 @@ mod write;
 
 #[cfg(test)]
 mod forms;
+#[cfg(test)]
+mod refusals;
 #[cfg(test)]
 mod tests;
 #[cfg(test)]

@@ -14,10 +14,10 @@ pub(super) struct Number {
 }
 
 /// Whether the file's numbers have decimal commas: then more of its lines read as two, three or four numbers with
-/// commas as decimal signs than as two or three with commas as separators.
+/// commas as decimal signs than as two or three with commas as separators. The first thousand with commas tell.
 pub(super) fn decimal_comma<'a>(lines: impl Iterator<Item = &'a str>) -> bool {
     let mut found = [[0_usize; 5]; 2];
-    for line in lines.filter(|line| line.contains(',')) {
+    for line in lines.filter(|line| line.contains(',')).take(1000) {
         for (comma, counts) in [false, true].into_iter().zip(&mut found) {
             if let Some(count) = row(line, comma).and_then(|numbers| counts.get_mut(numbers.len())) {
                 *count += 1;
@@ -25,7 +25,9 @@ pub(super) fn decimal_comma<'a>(lines: impl Iterator<Item = &'a str>) -> bool {
         }
     }
     let [point, comma] = found;
-    point[2].max(point[3]) < comma[2].max(comma[3]).max(comma[4])
+    // `0,5; ,06` reads as three whole numbers too
+    let pairs = comma[2] > point[2] && comma[2] >= point[3];
+    pairs || point[2].max(point[3]) < comma[3].max(comma[4])
 }
 
 /// The numbers of a line, or nothing where anything else is on it.

@@ -1,5 +1,6 @@
 //! Points in the file's order to one run around the section.
 
+use crate::airfoil::coordinates::ends::{check_gap, check_trailing_edge, drop_base, is_nose};
 use crate::airfoil::coordinates::error::Error;
 use crate::airfoil::coordinates::layout::{Listing, Point};
 use crate::airfoil::coordinates::text::{Line, place};
@@ -14,16 +15,18 @@ pub(super) struct Run {
     pub(super) decimals: [i32; 2],
 }
 
-fn distance(a: Point, b: Point) -> f64 {
+/// Distance of two points.
+pub(super) fn distance(a: Point, b: Point) -> f64 {
     (a.at[0] - b.at[0]).hypot(a.at[1] - b.at[1])
 }
 
-fn same(a: Point, b: Point) -> bool {
+/// Whether two points are the same.
+pub(super) fn same(a: Point, b: Point) -> bool {
     distance(a, b) <= 0.0
 }
 
 /// Middle of two points, at the line of the first.
-fn middle(a: Point, b: Point) -> Point {
+pub(super) fn middle(a: Point, b: Point) -> Point {
     Point {
         at: [0.5 * (a.at[0] + b.at[0]), 0.5 * (a.at[1] + b.at[1])],
         line: a.line,
@@ -31,7 +34,7 @@ fn middle(a: Point, b: Point) -> Point {
 }
 
 /// Index of the point farthest from `from`, and its distance.
-fn farthest(points: &[Point], from: Point) -> (usize, f64) {
+pub(super) fn farthest(points: &[Point], from: Point) -> (usize, f64) {
     let mut best = (0, 0.0);
     for (i, &p) in points.iter().enumerate() {
         let d = distance(p, from);
@@ -44,6 +47,7 @@ fn farthest(points: &[Point], from: Point) -> (usize, f64) {
 
 /// Recognises the layout and brings the points into one run.
 pub(super) fn arrange(listing: &Listing, lines: &[Line<'_>], notes: &mut Vec<String>) -> Result<Run, Error> {
+    let listing = &single(listing, notes);
     let points = &listing.points;
     let (Some(&first), Some(&last)) = (points.first(), points.last()) else {
         return Err(Error::NoPoints { at: place(lines, 1) });
@@ -70,21 +74,6 @@ pub(super) fn arrange(listing: &Listing, lines: &[Line<'_>], notes: &mut Vec<Str
         }
         None => around(points, lines, notes)?,
     };
-    let before = run.len();
-    let mut kept: Vec<Point> = Vec::with_capacity(before);
-    for point in run {
-        if kept.last().is_none_or(|&last| !same(last, point)) {
-            kept.push(point);
-        }
-    }
-    run = kept;
-    if run.len() < before {
-        let dropped = before - run.len();
-        notes.push(format!(
-            "{dropped} repeated point{} left out.",
-            if dropped == 1 { "" } else { "s" }
-        ));
-    }
     drop_base(&mut run, notes);
     if run.len() < 3 {
         let at = place(lines, first.line);
@@ -106,7 +95,39 @@ pub(super) fn arrange(listing: &Listing, lines: &[Line<'_>], notes: &mut Vec<Str
     })
 }
 
-fn not_one(lines: &[Line<'_>], at: Point, why: String) -> Error {
+/// The listing without points that repeat the one before.
+fn single(listing: &Listing, notes: &mut Vec<String>) -> Listing {
+    let given = &listing.points;
+    let mut kept: Vec<Point> = Vec::with_capacity(given.len());
+    // new index of each given point, and of the end
+    let mut index = Vec::with_capacity(given.len() + 1);
+    for &point in given {
+        index.push(kept.len());
+        if kept.last().is_none_or(|&last| !same(last, point)) {
+            kept.push(point);
+        }
+    }
+    index.push(kept.len());
+    let dropped = given.len() - kept.len();
+    if dropped > 0 {
+        let s = if dropped == 1 { "" } else { "s" };
+        notes.push(format!("{dropped} repeated point{s} left out."));
+    }
+    Listing {
+        title: None,
+        points: kept,
+        counted: listing.counted.map(|(at, line)| (index[at], line)),
+        headings: listing
+            .headings
+            .iter()
+            .map(|&(at, line)| (index[at], line))
+            .collect(),
+        decimals: listing.decimals,
+    }
+}
+
+/// The refusal of points that are not one run, at the point where that shows.
+pub(super) fn not_one(lines: &[Line<'_>], at: Point, why: String) -> Error {
     Error::NotOneContour {
         at: place(lines, at.line),
         why,
@@ -114,7 +135,7 @@ fn not_one(lines: &[Line<'_>], at: Point, why: String) -> Error {
 }
 
 /// Twice the area within the closed run \[square of the file's unit\], positive where it runs counter-clockwise.
-fn signed_area(points: &[Point]) -> f64 {
+pub(super) fn signed_area(points: &[Point]) -> f64 {
     let Some(&Point { at: [x0, y0], .. }) = points.first() else {
         return 0.0;
     };
@@ -187,35 +208,6 @@ fn check_headings(listing: &Listing, parting: Option<usize>, lines: &[Line<'_>])
     Ok(())
 }
 
-/// Widest extent across the line from `a` to `b`, of the points that lie within an eighth of it from `a`.
-fn bluntness(points: &[Point], a: Point, b: Point) -> Option<f64> {
-    let chord = distance(a, b);
-    let along = [(b.at[0] - a.at[0]) / chord, (b.at[1] - a.at[1]) / chord];
-    let (mut low, mut high, mut count) = (0.0_f64, 0.0_f64, 0);
-    for p in points {
-        let d = [p.at[0] - a.at[0], p.at[1] - a.at[1]];
-        if d[0] * along[0] + d[1] * along[1] < 0.125 * chord {
-            let across = d[1] * along[0] - d[0] * along[1];
-            (low, high, count) = (low.min(across), high.max(across), count + 1);
-        }
-    }
-    (count > 2).then_some(high - low)
-}
-
-/// Whether `a` is the nose and `b` the trailing edge: by the order in x, unless the shape says clearly otherwise.
-fn is_nose(points: &[Point], a: Point, b: Point, lines: &[Line<'_>]) -> Result<bool, Error> {
-    let by_order = a.at[0] < b.at[0];
-    if let (Some(at_a), Some(at_b)) = (bluntness(points, a, b), bluntness(points, b, a)) {
-        let (nose, edge) = if by_order { (at_a, at_b) } else { (at_b, at_a) };
-        if edge > 2.0 * nose {
-            return Err(Error::NoseAft {
-                at: place(lines, points.first().map_or(1, |p| p.line)),
-            });
-        }
-    }
-    Ok(by_order)
-}
-
 /// Two sides that run the same way, to one run.
 fn join(
     one: &[Point],
@@ -223,7 +215,7 @@ fn join(
     lines: &[Line<'_>],
     notes: &mut Vec<String>,
 ) -> Result<Vec<Point>, Error> {
-    let all: Vec<Point> = [one, two].concat();
+    let around: Vec<Point> = one.iter().rev().chain(two).copied().collect();
     let (a, b) = (
         middle(one[0], two[0]),
         middle(one[one.len() - 1], two[two.len() - 1]),
@@ -238,7 +230,7 @@ fn join(
             return Err(not_one(lines, p, why));
         }
     }
-    let nose_first = is_nose(&all, a, b, lines)?;
+    let nose_first = is_nose(&around, a, b, lines)?;
     let from = if nose_first {
         "from the nose"
     } else {
@@ -265,29 +257,6 @@ fn join(
     }
     run.append(&mut second);
     Ok(run)
-}
-
-/// Where `one` ends and `two` begins, at the nose, there is no gap much wider than the steps beside it.
-fn check_gap(one: &[Point], two: &[Point], lines: &[Line<'_>]) -> Result<(), Error> {
-    let (Some(&a), Some(&c)) = (one.last(), two.first()) else {
-        return Ok(());
-    };
-    let gap = distance(a, c);
-    let behind = smaller(&mut one.windows(2).rev().map(|w| distance(w[0], w[1])));
-    let ahead = smaller(&mut two.windows(2).map(|w| distance(w[0], w[1])));
-    if gap > 3.0 * behind.max(ahead) {
-        let why = format!(
-            "a gap at the nose between this line and line {}: points are missing",
-            c.line
-        );
-        return Err(not_one(lines, a, why));
-    }
-    Ok(())
-}
-
-/// The smaller of the first two steps; the first alone may come from a spoiled row. Repeated points do not count.
-fn smaller(steps: &mut dyn Iterator<Item = f64>) -> f64 {
-    steps.filter(|&d| d > 0.0).take(2).fold(f64::INFINITY, f64::min)
 }
 
 /// A single run around the section from the trailing edge, or from the nose.
@@ -330,61 +299,7 @@ fn around(points: &[Point], lines: &[Line<'_>], notes: &mut Vec<String>) -> Resu
         rest = &rest[1..];
     }
     run.extend_from_slice(rest);
+    // the side that was first from the nose comes first from the trailing edge too
+    run.reverse();
     Ok(run)
-}
-
-/// Drops a base that is drawn into the run: from the lower edge back to the upper one, or from its middle.
-fn drop_base(run: &mut Vec<Point>, notes: &mut Vec<String>) {
-    let n = run.len();
-    if n < 8 || !same(run[0], run[n - 1]) {
-        return;
-    }
-    let (_, chord) = farthest(run, run[0]);
-    let steep = |a: Point, b: Point| {
-        let (dx, dy) = ((a.at[0] - b.at[0]).abs(), (a.at[1] - b.at[1]).abs());
-        dy > 3.0 * dx && dy < 0.1 * chord
-    };
-    let (front, back) = (steep(run[0], run[1]), steep(run[n - 1], run[n - 2]));
-    if back {
-        run.pop();
-    }
-    if front {
-        run.remove(0);
-    }
-    if front || back {
-        notes.push("The line across the blunt trailing edge left out.".to_owned());
-    }
-}
-
-/// Both sides end at the same place along the chord.
-fn check_trailing_edge(run: &[Point], listing: &Listing, lines: &[Line<'_>]) -> Result<(), Error> {
-    let (Some(&upper), Some(&lower)) = (run.first(), run.last()) else {
-        return Ok(());
-    };
-    let edge = middle(upper, lower);
-    let (k, chord) = farthest(run, edge);
-    let along = [
-        (edge.at[0] - run[k].at[0]) / chord,
-        (edge.at[1] - run[k].at[1]) / chord,
-    ];
-    let d = [upper.at[0] - lower.at[0], upper.at[1] - lower.at[1]];
-    let ahead = d[0] * along[0] + d[1] * along[1];
-    let aside = d[1] * along[0] - d[0] * along[1];
-    let unit = 10_f64
-        .powi(-listing.decimals[0].min(listing.decimals[1]))
-        .min(1e-3 * chord);
-    if ahead.abs() > 0.5 * aside.abs() + 5e-4 * chord + 2.0 * unit {
-        let (short, other) = if ahead < 0.0 {
-            (upper, lower)
-        } else {
-            (lower, upper)
-        };
-        let why = format!(
-            "this side ends {:.4} of the chord before the other, at line {}",
-            ahead.abs() / chord,
-            other.line
-        );
-        return Err(not_one(lines, short, why));
-    }
-    Ok(())
 }
