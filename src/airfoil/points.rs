@@ -23,12 +23,20 @@ pub(super) struct Smooth {
 
 /// Fits a contour. `None` where no reasonable curve is within 1e-5 of the chord of all points.
 pub(super) fn smooth(contour: &Contour) -> Option<Smooth> {
-    let foremost = Foremost::of(&contour.points, contour.nose)?;
-    let data = data(&contour.points, &foremost);
+    let estimate = Foremost::of(&contour.points, contour.nose)?;
     // half a unit of the last printed place is in the data anyway
     let decimals = i32::try_from(contour.decimals).unwrap_or(i32::MAX).min(12);
     let tolerance = (0.75 * 10.0_f64.powi(-decimals)).clamp(BEST, WORST);
-    let (knots, fit) = fit(&data, tolerance)?;
+    // the foremost point may be a given one, or lie ahead of all given ones: the curve tells which
+    let given = estimate.at_given_point(&contour.points, contour.nose);
+    let trial = |foremost: Foremost| {
+        let data = data(&contour.points, &foremost);
+        fit(&data, tolerance).map(|(knots, fit)| (foremost, data, knots, fit))
+    };
+    let (foremost, data, knots, fit) = [given, estimate]
+        .into_iter()
+        .filter_map(trial)
+        .min_by(|a, b| worst(&a.3).max(tolerance).total_cmp(&worst(&b.3).max(tolerance)))?;
     let deviation = worst(&fit);
     let function = Function {
         knots,
@@ -99,6 +107,16 @@ impl Foremost {
         Some(Self { x: least, y, place })
     }
 
+    /// The same with the foremost given point as the foremost of all.
+    fn at_given_point(&self, points: &[[f64; 2]], nose: usize) -> Self {
+        let [x, y] = points[nose];
+        Self {
+            x: x.min(0.0),
+            y,
+            place: nose as f64,
+        }
+    }
+
     /// σ where the contour meets the chord line at the nose, x = 0: behind the foremost point, on the side away from it.
     fn chord_line_sigma(&self) -> f64 {
         let size = (-self.x).max(0.0).sqrt();
@@ -157,8 +175,8 @@ fn fit(data: &[Datum], tolerance: f64) -> Option<(Knots, Fit)> {
             let from = data.partition_point(|d| d.sigma < span[0]);
             let to = data.partition_point(|d| d.sigma < span[1]);
             let off = best.1.deviations[from..to].iter().any(|d| d.abs() > tolerance);
-            // two points stay on either side, so that the points settle every coefficient
-            if off && to - from >= 4 {
+            // a point stays on either side, so that the points settle every coefficient
+            if off && to - from >= 3 {
                 let middle = from + (to - from) / 2;
                 finer.push(0.5 * (data[middle - 1].sigma + data[middle].sigma));
             }

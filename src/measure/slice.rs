@@ -114,9 +114,7 @@ impl Slices {
     pub fn planform(&self) -> Planform {
         let (mut area, mut square, mut moment) = (0.0, 0.0, 0.0);
         for pair in self.corners.windows(2) {
-            let middle =
-                |corner: &[Point3<f64>; 3]| 0.5 * (self.offset(&corner[0]) + self.offset(&corner[1]));
-            let (from, to) = (middle(&pair[0]), middle(&pair[1]));
+            let (from, to) = (self.place(&pair[0]), self.place(&pair[1]));
             for (t, weight) in ten(0.0, 1.0) {
                 let blend = |which: usize| pair[0][which] + (pair[1][which] - pair[0][which]) * t;
                 let chord = (blend(1) - blend(0)).norm();
