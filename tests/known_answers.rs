@@ -188,15 +188,15 @@ fn the_agard_b_wing_has_its_printed_figures() {
     // runs out in a point; here the tip has a chord of 1/1000 diameter, which adds that part of 2 b to the area.
     let root3 = 3.0_f64.sqrt();
     let spec = format!(
-        "name = \"AGARD-B\"\nunit = \"mm\"\n[planform]\nspan = 400\nroot_chord = {}\ntip_chord = 0.1\nsweep = 60\n\
+        "name = \"AGARD-B\"\nunit = \"mm\"\n[planform]\nspan = 4000\nroot_chord = {}\ntip_chord = 1\nsweep = 60\n\
          sweep_at = 0\n[airfoil]\nroot = \"NACA 0004\"\n[trailing_edge]\nthickness = 0\n[build]\nsides = \"both\"\n",
-        200.0 * root3
+        2000.0 * root3
     );
     let figures = loft(&WorkDir::new(), &spec);
-    let area = figures.number("reference.area") / 1e4;
+    let area = figures.number("reference.area") / 1e6;
     assert_relative("area [D2]", area, 4.0 * root3 + 0.5 * 4.0 * 1e-3, 1e-9);
     // MAC (2/3) c_r (1 + λ + λ²)/(1 + λ): λ = 2.9e-4 adds λ²
-    let mac = figures.number("reference.mac.length") / 100.0;
+    let mac = figures.number("reference.mac.length") / 1000.0;
     assert_relative("MAC [D]", mac, 4.0 * root3 / 3.0, 1e-7);
 }
 

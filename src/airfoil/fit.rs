@@ -41,26 +41,27 @@ pub struct Profile {
 }
 
 impl Profile {
-    /// Thickness of the trailing edge's base \[chord\].
+    /// Thickness of the trailing edge's base, from its upper to its lower edge \[chord\].
     pub fn base(&self) -> f64 {
+        let [along, height] = self.base_vector();
+        along.hypot(height)
+    }
+
+    /// From the base's lower edge to its upper one.
+    fn base_vector(&self) -> [f64; 2] {
         let (upper, lower) = (self.upper[self.upper.len() - 1], self.lower[self.lower.len() - 1]);
-        upper[1] - lower[1]
+        [upper[0] - lower[0], upper[1] - lower[1]]
     }
 
     /// The profile with its base opened (or closed) to `base`, by a wedge that grows in proportion to x from the nose.
     pub fn with_base(&self, base: f64) -> Self {
-        let half = 0.5 * (base - self.base());
+        let [along, height] = self.base_vector();
+        let half = 0.5 * ((base * base - along * along).max(0.0).sqrt() - height);
         let wedge = |points: &[[f64; 2]], side: f64| -> Vec<[f64; 2]> {
             let end = points[points.len() - 1][0];
-            points
-                .iter()
-                .map(|[x, y]| [*x, y + side * half * x / end])
-                .collect()
+            points.iter().map(|[x, y]| [*x, y + side * half * x / end]).collect()
         };
-        let mut profile = Self {
-            upper: wedge(&self.upper, 1.0),
-            lower: wedge(&self.lower, -1.0),
-        };
+        let mut profile = Self { upper: wedge(&self.upper, 1.0), lower: wedge(&self.lower, -1.0) };
         if base == 0.0 {
             // a closed edge is one point, to the last bit
             let (u, l) = (profile.upper.len() - 1, profile.lower.len() - 1);

@@ -89,7 +89,7 @@ fn load(
     })?;
     let contour = coordinates::read(&bytes, text).map_err(|e| {
         let place = if e.line() > 0 {
-            format!(", line {}", e.line())
+            format!(":{}", e.line())
         } else {
             String::new()
         };
