@@ -18,9 +18,18 @@ fn main() -> Result<(), Box<dyn Error>> {
     };
     let text = std::fs::read_to_string(spec)?;
     let directory = Path::new(spec).parent().unwrap_or(Path::new(""));
-    let source = Source { text: &text, file: spec, set: &[] };
-    let prepared = prepare(&source, &|name| std::fs::read(directory.join(name)))
-        .map_err(|faults| faults.iter().map(ToString::to_string).collect::<Vec<_>>().join("\n"))?;
+    let source = Source {
+        text: &text,
+        file: spec,
+        set: &[],
+    };
+    let prepared = prepare(&source, &|name| std::fs::read(directory.join(name))).map_err(|faults| {
+        faults
+            .iter()
+            .map(ToString::to_string)
+            .collect::<Vec<_>>()
+            .join("\n")
+    })?;
     let wing = Wing::build(&prepared)?;
     std::fs::write(picture, draw(&wing)?)?;
     Ok(())
@@ -37,7 +46,11 @@ impl View {
     fn new() -> Self {
         let towards = Vector3::new(-0.62, -0.52, 0.59).normalize();
         let across = towards.cross(&Vector3::z()).normalize() * -1.0;
-        Self { across, up: towards.cross(&across), towards }
+        Self {
+            across,
+            up: towards.cross(&across),
+            towards,
+        }
     }
 
     fn at(&self, point: &Point3<f64>) -> [f64; 2] {
@@ -52,7 +65,9 @@ fn draw(wing: &Wing) -> Result<String, std::fmt::Error> {
     for mesh in &wing.meshes {
         for facet in &mesh.facets {
             let corners = facet.map(|k| mesh.corners[k as usize]);
-            let normal = (corners[1] - corners[0]).cross(&(corners[2] - corners[0])).normalize();
+            let normal = (corners[1] - corners[0])
+                .cross(&(corners[2] - corners[0]))
+                .normalize();
             if normal.dot(&view.towards) > 0.0 {
                 let depth: f64 = corners.iter().map(|c| c.coords.dot(&view.towards)).sum();
                 facets.push((depth, corners, 0.30 + 0.62 * normal.dot(&light).max(0.0)));
@@ -64,9 +79,16 @@ fn draw(wing: &Wing) -> Result<String, std::fmt::Error> {
         .chain(wing.reference.lines.iter().flat_map(|line| line.points.iter()))
         .map(|point| view.at(point))
         .collect();
-    let extreme = |k: usize, pick: fn(f64, f64) -> f64, start: f64| points.iter().map(|p| p[k]).fold(start, pick);
-    let (left, right) = (extreme(0, f64::min, f64::INFINITY), extreme(0, f64::max, f64::NEG_INFINITY));
-    let (top, bottom) = (extreme(1, f64::min, f64::INFINITY), extreme(1, f64::max, f64::NEG_INFINITY));
+    let extreme =
+        |k: usize, pick: fn(f64, f64) -> f64, start: f64| points.iter().map(|p| p[k]).fold(start, pick);
+    let (left, right) = (
+        extreme(0, f64::min, f64::INFINITY),
+        extreme(0, f64::max, f64::NEG_INFINITY),
+    );
+    let (top, bottom) = (
+        extreme(1, f64::min, f64::INFINITY),
+        extreme(1, f64::max, f64::NEG_INFINITY),
+    );
     let scale = 900.0 / (right - left);
     let place = |point: &Point3<f64>| {
         let [x, y] = view.at(point);
@@ -74,14 +96,26 @@ fn draw(wing: &Wing) -> Result<String, std::fmt::Error> {
     };
     let height = 40.0 + (bottom - top) * scale;
     let mut out = String::new();
-    writeln!(out, r#"<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 940 {height:.0}" stroke-linejoin="round">"#)?;
-    writeln!(out, "<title>Shaded view of a wing with its reference lines</title>")?;
-    writeln!(out, r##"<rect width="940" height="{height:.0}" fill="#f7f5f0"/>"##)?;
+    writeln!(
+        out,
+        r#"<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 940 {height:.0}" stroke-linejoin="round">"#
+    )?;
+    writeln!(
+        out,
+        "<title>Shaded view of a wing with its reference lines</title>"
+    )?;
+    writeln!(
+        out,
+        r##"<rect width="940" height="{height:.0}" fill="#f7f5f0"/>"##
+    )?;
     for (_, corners, shade) in &facets {
         let [r, g, b] = [196.0, 208.0, 214.0].map(|c: f64| (c * shade).round().clamp(0.0, 255.0));
         let outline = corners.iter().map(&place).collect::<Vec<_>>().join(" ");
         let colour = format!("rgb({r},{g},{b})");
-        writeln!(out, r#"<polygon points="{outline}" fill="{colour}" stroke="{colour}" stroke-width="0.6"/>"#)?;
+        writeln!(
+            out,
+            r#"<polygon points="{outline}" fill="{colour}" stroke="{colour}" stroke-width="0.6"/>"#
+        )?;
     }
     for line in &wing.reference.lines {
         let (colour, width, dash) = match line.kind {

@@ -349,8 +349,14 @@ fn open_cascade_cuts_a_section_of_the_thickness_and_base_asked_for() {
     assert_near("chord [mm]", cut.number("chord"), 1000.0, 1e-5);
     assert_near("incidence [deg]", cut.number("incidence"), 0.0, 1e-6);
     assert_near("base [mm]", cut.number("base"), 3.0, 1e-4);
-    // blending 0.48 mm more base in from the nose adds at most 0.3 of it where the section is thickest
-    assert_near("thickness [mm]", cut.number("thickness"), 120.0, 0.2);
+    // 1.000288 x 120 mm (the form's own maximum) + 0.3 x 0.48 mm (the base opened from 2.52 to 3 mm in proportion to x) +
+    // what cutting upright adds where the mean line rises by 2 m (p - x)/p² = 0.025: 120 mm x 0.025²/2 (computed)
+    assert_near(
+        "thickness [mm]",
+        cut.number("thickness"),
+        120.035 + 0.144 + 0.037,
+        0.01,
+    );
     assert_near("camber [mm]", cut.number("camber"), 20.0, 0.05);
     assert_near("position of the camber [-]", cut.number("camber_at"), 0.4, 0.02);
 }

@@ -99,6 +99,7 @@ pub(crate) static EXAMPLES: LazyLock<Vec<Example>> = LazyLock::new(|| {
     let mut specs: Vec<PathBuf> = fs::read_dir(package().join("examples"))
         .expect("the examples")
         .map(|entry| entry.expect("an entry").path())
+        .filter(|path| path.extension().is_some_and(|ending| ending == "toml"))
         .collect();
     specs.sort();
     let examples: Vec<Example> = specs.iter().map(|path| lofted(&directory, path)).collect();
@@ -132,7 +133,10 @@ fn lofted(directory: &WorkDir, path: &std::path::Path) -> Example {
     let stl = written("stl");
     assert!(!stl.is_empty(), "{name}: an STL file");
     Example {
-        spec: fs::read_to_string(path).expect("the spec").parse().expect("TOML"),
+        spec: fs::read_to_string(path)
+            .expect("the spec")
+            .parse()
+            .unwrap_or_else(|_| panic!("{}: no TOML", path.display())),
         printed: Figures::parse(&stdout),
         figures: Figures::parse(&fs::read_to_string(json).expect("the figures")),
         step_text: fs::read_to_string(&step).expect("the STEP file"),

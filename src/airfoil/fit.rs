@@ -59,9 +59,15 @@ impl Profile {
         let half = 0.5 * ((base * base - along * along).max(0.0).sqrt() - height);
         let wedge = |points: &[[f64; 2]], side: f64| -> Vec<[f64; 2]> {
             let end = points[points.len() - 1][0];
-            points.iter().map(|[x, y]| [*x, y + side * half * x / end]).collect()
+            points
+                .iter()
+                .map(|[x, y]| [*x, y + side * half * x / end])
+                .collect()
         };
-        let mut profile = Self { upper: wedge(&self.upper, 1.0), lower: wedge(&self.lower, -1.0) };
+        let mut profile = Self {
+            upper: wedge(&self.upper, 1.0),
+            lower: wedge(&self.lower, -1.0),
+        };
         if base == 0.0 {
             // a closed edge is one point, to the last bit
             let (u, l) = (profile.upper.len() - 1, profile.lower.len() - 1);
