@@ -75,6 +75,10 @@ impl Wing {
     }
 
     /// The STL files: one a solid, because STL cannot tell two solids that touch apart.
+    ///
+    /// # Panics
+    ///
+    /// Never: a vector takes all bytes.
     pub fn stl(&self) -> Vec<Vec<u8>> {
         let write = |mesh: &Mesh| {
             let mut bytes = Vec::with_capacity(84 + 50 * mesh.facets.len());

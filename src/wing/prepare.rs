@@ -23,6 +23,10 @@ pub struct Prepared {
 /// # Errors
 ///
 /// Every fault of the spec and of its sections, in the order of the file.
+///
+/// # Panics
+///
+/// Never: a reading without faults has a spec, and names each of its airfoils.
 pub fn prepare(
     source: &Source<'_>,
     open: &dyn Fn(&str) -> io::Result<Vec<u8>>,
