@@ -43,7 +43,7 @@ impl Wing {
     ///
     /// # Errors
     ///
-    /// [`Error`] where the sections cannot be fitted or joined.
+    /// [`enum@Error`] where the sections cannot be fitted or joined.
     pub fn build(prepared: &Prepared) -> Result<Self, Error> {
         let Prepared {
             spec,
