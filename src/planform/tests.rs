@@ -1,6 +1,9 @@
 //! Known answers of the reference wing.
 
-use crate::spec::{AirfoilSource, IncidenceAt, Panel, Place, Setting, Sides, Spec, Unit};
+use crate::spec::{
+    AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting, Sides, Spec, SurfaceKind, TipForm,
+    TwistKind, TwistLaw, Unit,
+};
 
 use super::Planform;
 
@@ -32,11 +35,22 @@ fn wing(root_chord: f64, panels: &[(f64, f64, f64)]) -> Spec {
             incidence: 0.0,
             at: IncidenceAt::Mac,
             twist_axis: 0.25,
+            twist_kind: TwistKind::default(),
+            twist_law: TwistLaw::default(),
+            for_cruise: false,
         },
         trailing_edge: None,
         facet_tolerance: 0.05,
         sides: Sides::Both,
         lines: Vec::new(),
+        load: None,
+        cruise: None,
+        body: None,
+        placing: Placing::default(),
+        outline: Outline::default(),
+        surface: SurfaceKind::default(),
+        tip: TipForm::default(),
+        trailing_edge_ratio: None,
         stated: Vec::new(),
     }
 }

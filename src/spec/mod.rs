@@ -3,6 +3,7 @@
 //! [`read`] takes the text and gives a [`Reading`]: the resolved [`Spec`], or every [`Fault`] of the file at once.
 //! All lengths here are millimetres, all angles radians (see the crate's conventions).
 
+mod choices;
 mod document;
 mod fault;
 mod keys;
@@ -18,6 +19,9 @@ mod unit;
 mod unknown;
 mod written;
 
+pub use choices::{
+    Body, Cruise, Load, Outline, Placing, Position, Step, SurfaceKind, TipForm, TwistKind, TwistLaw,
+};
 pub use fault::{Fault, Place, sort_faults};
 pub use keys::keys;
 pub use panels::ReferencePlane;
@@ -47,6 +51,22 @@ pub struct Spec {
     pub sides: Sides,
     /// Extra construction lines.
     pub lines: Vec<ConstructionLine>,
+    /// What the wing carries, where the file says so.
+    pub load: Option<Load>,
+    /// Cruise, where the file has it.
+    pub cruise: Option<Cruise>,
+    /// The fuselage, where the file has one.
+    pub body: Option<Body>,
+    /// Where the wing goes.
+    pub placing: Placing,
+    /// The outline.
+    pub outline: Outline,
+    /// How faces run between stations.
+    pub surface: SurfaceKind,
+    /// How the wing ends.
+    pub tip: TipForm,
+    /// Trailing-edge thickness in proportion to the chord at least this part of it \[-\]; besides `trailing_edge`.
+    pub trailing_edge_ratio: Option<f64>,
     /// The sizes that the file states, for the proof sheet: each with the value typed.
     pub stated: Vec<Stated>,
 }
@@ -91,6 +111,12 @@ pub struct Setting {
     pub at: IncidenceAt,
     /// Chord fraction of the point that a section turns about \[-\], 0 to 1.
     pub twist_axis: f64,
+    /// How the panels' twist is counted.
+    pub twist_kind: TwistKind,
+    /// How twist runs along the span.
+    pub twist_law: TwistLaw,
+    /// True for `incidence = "cruise"`: the incidence at the mean aerodynamic chord follows from cruise and load.
+    pub for_cruise: bool,
 }
 
 /// Where the incidence that was asked for holds.

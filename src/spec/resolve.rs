@@ -8,7 +8,10 @@ use super::quantity::significant;
 use super::sizes::Size;
 use super::unknown;
 use super::written::{Entry, Given, Line, Reader, Written};
-use super::{AirfoilSource, ConstructionLine, IncidenceAt, Panel, Setting, Sides, Spec};
+use super::{
+    AirfoilSource, ConstructionLine, IncidenceAt, Outline, Panel, Placing, Setting, Sides, Spec, SurfaceKind,
+    TipForm, TwistKind, TwistLaw,
+};
 
 /// Largest thickness of the trailing edge, as a part of the smallest chord \[-\].
 const THICKEST_TRAILING_EDGE: f64 = 0.1;
@@ -121,11 +124,22 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
             incidence: written.setting.incidence.or(0.0),
             at: written.setting.at.or(IncidenceAt::Mac),
             twist_axis: written.setting.twist_axis.or(QUARTER),
+            twist_kind: TwistKind::default(),
+            twist_law: TwistLaw::default(),
+            for_cruise: false,
         },
         trailing_edge: written.trailing_edge.thickness.given().map(|given| given.value),
         facet_tolerance: written.facets.tolerance.or(FACET_TOLERANCE),
         sides,
         lines,
+        load: None,
+        cruise: None,
+        body: None,
+        placing: Placing::default(),
+        outline: Outline::default(),
+        surface: SurfaceKind::default(),
+        tip: TipForm::default(),
+        trailing_edge_ratio: None,
         stated,
     })
 }
