@@ -3,11 +3,13 @@
 //! Everything here is non-rational, clamped, and of degree 5 at most.
 
 mod curve;
+mod interpolate;
 mod knots;
 mod least_squares;
 mod surface;
 
 pub use curve::{Curve, Function};
+pub use interpolate::{Ends, Interpolation, part_from};
 pub use knots::{Derivatives, Knots, MAX_DEGREE};
 pub use least_squares::{Fit, LeastSquares};
 pub use surface::{Derivative, Surface};
