@@ -78,6 +78,17 @@ impl Profile {
         profile
     }
 
+    /// The profile a `share` of the way to another on the same knots.
+    pub fn blended(&self, other: &Self, share: f64) -> Self {
+        if share == 0.0 {
+            return self.clone();
+        }
+        let mix = |a: &[[f64; 2]], b: &[[f64; 2]]| {
+            a.iter().zip(b).map(|(a, b)| [0, 1].map(|k| a[k] + (b[k] - a[k]) * share)).collect()
+        };
+        Self { upper: mix(&self.upper, &other.upper), lower: mix(&self.lower, &other.lower) }
+    }
+
     /// The profile with its ordinates multiplied by `factor`.
     pub fn thickened(&self, factor: f64) -> Self {
         let scale = |points: &[[f64; 2]]| points.iter().map(|[x, y]| [*x, y * factor]).collect();

@@ -8,5 +8,5 @@ mod slice;
 mod solid;
 
 pub use compare::{Ask, Check, Quantity, compare};
-pub use slice::{Chord, Slices};
+pub use slice::{Chord, Slices, Spanwise};
 pub use solid::{Figures, figures};

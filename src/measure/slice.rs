@@ -1,9 +1,10 @@
-//! Chord lines cut out of the faces by planes.
+//! Chord lines cut out of the faces.
 
 use nalgebra::{Point3, Vector3};
 
 use super::quadrature::ten;
 use crate::loft::Loft;
+use crate::spline::Surface;
 
 /// A chord line found on the solid: from the edge between the skins at the nose to the middle of the trailing edge.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -25,11 +26,7 @@ impl Chord {
     /// Turn against the x axis, leading edge up \[rad\].
     pub fn incidence(&self) -> f64 {
         let chord = self.rear - self.front;
-        chord
-            .y
-            .hypot(chord.z)
-            .copysign(-chord.dot(&self.up))
-            .atan2(chord.x)
+        chord.y.hypot(chord.z).copysign(-chord.dot(&self.up)).atan2(chord.x)
     }
 
     /// Point at a chord fraction \[mm\].
@@ -38,97 +35,122 @@ impl Chord {
     }
 }
 
-/// The edges of one side that chords are found between: nose, upper and lower rear edge of each panel.
+/// How the span is counted on the solid.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Spanwise {
+    /// Chord fraction of the points that a section's place along the span is counted by.
+    pub fraction: f64,
+    /// Whether the surface is a fin, which stands along z.
+    pub fin: bool,
+    /// Where the reference root's leading edge is: distances count from there \[mm\].
+    pub origin: Point3<f64>,
+}
+
+/// The faces of one side that chords are found on.
 #[derive(Clone, Debug)]
 pub struct Slices {
-    /// Corners along the span: (nose, middle of the trailing edge, a point on the upper side).
-    corners: Vec<[Point3<f64>; 3]>,
-    /// Chord fraction of the points that a section's place along the span is counted by.
-    fraction: f64,
-    /// Component that counts as spanwise: 1 (y) or, for a fin, 2 (z).
-    axis: usize,
+    /// Upper and lower skin of each panel.
+    skins: Vec<[Surface; 2]>,
+    /// Where the layout's stations lie: panel and spanwise parameter.
+    places: Vec<(usize, f64)>,
+    spanwise: Spanwise,
     /// -1 on the port side, else 1.
     sense: f64,
 }
 
 impl Slices {
-    /// Takes the edges of the faces of one side. Sections are placed along the span by their points at the chord
-    /// `fraction`; `fin` where the surface stands along z.
-    pub fn of(loft: &Loft, fraction: f64, fin: bool) -> Self {
-        let mut corners = Vec::with_capacity(loft.panels() + 1);
-        for k in 0..=loft.panels() {
-            // the faces' own boundaries: inner ends of each panel, then the outer end of the last
-            let panel = k.min(loft.panels() - 1);
-            let v = if k == panel { 0.0 } else { 1.0 };
-            let (upper, lower) = (loft.upper(panel), loft.lower(panel));
-            let rear = nalgebra::center(&upper.at(1.0, v), &lower.at(1.0, v));
-            corners.push([upper.at(0.0, v), rear, upper.at(0.3, v)]);
-        }
+    /// Takes the skins of one side.
+    pub fn of(loft: &Loft, spanwise: Spanwise) -> Self {
         Self {
-            corners,
-            fraction,
-            axis: if fin { 2 } else { 1 },
+            skins: (0..loft.panels()).map(|k| [loft.upper(k), loft.lower(k)]).collect(),
+            places: loft.places.clone(),
+            spanwise,
             sense: if loft.port { -1.0 } else { 1.0 },
         }
     }
 
-    /// Number of sections between panels, ends included.
+    /// Number of stations on the solid, its ends included.
     pub fn stations(&self) -> usize {
-        self.corners.len()
+        self.places.len()
     }
 
-    /// The chord at the end of a panel: station 0 is the root.
+    /// The chord at a station: 0 is the inner end of the solid.
     pub fn at_station(&self, station: usize) -> Chord {
-        let [front, rear, above] = self.corners[station];
-        chord(front, rear, above)
+        let (panel, v) = self.places[station];
+        self.chord(panel, v)
     }
 
     /// Distance of a point from the plane that the span is counted from, outwards \[mm\].
     pub fn offset(&self, point: &Point3<f64>) -> f64 {
-        match self.axis {
-            2 => point.z.abs(),
-            _ => point.y * self.sense,
-        }
+        let from = point - self.spanwise.origin;
+        if self.spanwise.fin { from.z.abs() } else { from.y * self.sense }
     }
 
-    /// The chord of the section whose point at the chord fraction lies `offset` from the centreline \[mm\]: all edges
-    /// are cut at the same share of their panel, in the plane at that offset where the panel's end sections are
-    /// parallel. `None` where there is no panel.
+    /// The chord of the section whose point at the chord fraction lies `offset` from the centreline \[mm\]. `None` where
+    /// the solid does not reach.
     pub fn at_offset(&self, offset: f64) -> Option<Chord> {
-        self.corners.windows(2).rev().find_map(|pair| {
-            let (from, to) = (self.place(&pair[0]), self.place(&pair[1]));
-            let t = (offset - from) / (to - from);
-            (-1e-9..=1.0 + 1e-9).contains(&t).then(|| {
-                let [front, rear, above] = [0, 1, 2].map(|k| pair[0][k] + (pair[1][k] - pair[0][k]) * t);
-                chord(front, rear, above)
-            })
+        (0..self.skins.len()).rev().find_map(|panel| {
+            let (from, to) = self.skins[panel][0].v.range();
+            let place = |v: f64| self.offset(&self.chord(panel, v).at(self.spanwise.fraction));
+            let slack = 1e-9 * (place(to) - place(from)).abs();
+            if offset < place(from) - slack || offset > place(to) + slack {
+                return None;
+            }
+            // regula falsi with halving: exact at once where elements are straight
+            let (mut low, mut high) = (from, to);
+            let (mut below, mut above) = (place(low) - offset, place(high) - offset);
+            for _ in 0..100 {
+                let v = (low - below * (high - low) / (above - below)).clamp(from, to);
+                let off = place(v) - offset;
+                if off.abs() <= slack || high - low < 1e-14 {
+                    return Some(self.chord(panel, v));
+                }
+                if off < 0.0 {
+                    (low, below) = (v, off);
+                    above *= 0.5;
+                } else {
+                    (high, above) = (v, off);
+                    below *= 0.5;
+                }
+            }
+            Some(self.chord(panel, 0.5 * (low + high)))
         })
     }
 
-    /// Offset of a section's point at the chord fraction.
-    fn place(&self, [front, rear, _]: &[Point3<f64>; 3]) -> f64 {
-        self.offset(&(front + (rear - front) * self.fraction))
-    }
-
-    /// Area, mean aerodynamic chord and its offset, by quadrature over chords cut panel by panel.
+    /// Area, mean aerodynamic chord and its offset, by quadrature over chords along the span.
     pub fn planform(&self) -> Planform {
         let (mut area, mut square, mut moment) = (0.0, 0.0, 0.0);
-        for pair in self.corners.windows(2) {
-            let (from, to) = (self.place(&pair[0]), self.place(&pair[1]));
-            for (t, weight) in ten(0.0, 1.0) {
-                let blend = |which: usize| pair[0][which] + (pair[1][which] - pair[0][which]) * t;
-                let chord = (blend(1) - blend(0)).norm();
-                let width = weight * (to - from);
-                area += chord * width;
-                square += chord * chord * width;
-                moment += (from + (to - from) * t) * chord * width;
+        for (panel, [upper, _]) in self.skins.iter().enumerate() {
+            for span in upper.v.corners().windows(2) {
+                for (v, weight) in ten(span[0], span[1]) {
+                    let (chord, rate) = self.chord_and_rate(panel, v);
+                    let (length, width) = (chord.length(), weight * rate);
+                    area += length * width;
+                    square += length * length * width;
+                    moment += self.offset(&chord.at(self.spanwise.fraction)) * length * width;
+                }
             }
         }
-        Planform {
-            area,
-            mac: square / area,
-            offset: moment / area,
-        }
+        Planform { area, mac: square / area, offset: moment / area }
+    }
+
+    /// The chord line at a panel's spanwise parameter.
+    fn chord(&self, panel: usize, v: f64) -> Chord {
+        let [upper, lower] = &self.skins[panel];
+        let rear = nalgebra::center(&upper.at(1.0, v), &lower.at(1.0, v));
+        chord(upper.at(0.0, v), rear, upper.at(0.3, v))
+    }
+
+    /// The chord line, and how fast its place along the span changes with the parameter.
+    fn chord_and_rate(&self, panel: usize, v: f64) -> (Chord, f64) {
+        let [upper, lower] = &self.skins[panel];
+        let (front, above) = (upper.derivative(0.0, v), upper.derivative(1.0, v));
+        let below = lower.derivative(1.0, v);
+        let rear = nalgebra::center(&above.point, &below.point);
+        let rear_rate = (above.v + below.v) * 0.5;
+        let rate = front.v + (rear_rate - front.v) * self.spanwise.fraction;
+        let rate = if self.spanwise.fin { rate.z.abs() } else { rate.y * self.sense };
+        (chord(front.point, rear, upper.at(0.3, v)), rate)
     }
 }
 

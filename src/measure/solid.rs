@@ -79,9 +79,11 @@ impl Sums {
     fn face(&mut self, surface: &Surface, origin: Point3<f64>, sense: f64) {
         for u in surface.u.corners().windows(2) {
             for v in surface.v.corners().windows(2) {
+                let straight = surface.v.degree() == 1;
+                let rule: Vec<(f64, f64)> = if straight { four(v[0], v[1]).collect() } else { ten(v[0], v[1]).collect() };
                 for (s, weight_u) in ten(u[0], u[1]) {
-                    for (t, weight_v) in four(v[0], v[1]) {
-                        let d = surface.derivative(s, t);
+                    for (t, weight_v) in &rule {
+                        let d = surface.derivative(s, *t);
                         self.element(d.point - origin, d.u.cross(&d.v) * (sense * weight_u * weight_v));
                     }
                 }

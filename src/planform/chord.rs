@@ -16,18 +16,18 @@ pub struct ChordLine {
 }
 
 impl ChordLine {
-    /// The chord line at `fraction` (0 to 1) of panel `panel`: between the ends, front and rear run straight.
+    /// The chord line of weighted stations: between two with the weights 1 - η and η, front and rear run straight.
     ///
     /// Between equal planes its turn from the inner section is
     /// `tan θ = η c_o sin θ_o / ((1 - η) c_i + η c_o cos θ_o)`, with θ_o the outer section's.
-    pub fn between(stations: &[Station], (panel, fraction): (usize, f64)) -> Self {
-        let (inner, outer) = (&stations[panel], &stations[panel + 1]);
-        let blend = |a: Point3<f64>, b: Point3<f64>| a + (b - a) * fraction;
-        Self {
-            leading_edge: blend(inner.leading_edge(), outer.leading_edge()),
-            trailing_edge: blend(inner.trailing_edge(), outer.trailing_edge()),
-            up: (inner.up * (1.0 - fraction) + outer.up * fraction).normalize(),
+    pub(super) fn of<'a>(weighted: impl Iterator<Item = (&'a Station, f64)>) -> Self {
+        let mut sums = [Vector3::zeros(); 3];
+        for (station, weight) in weighted {
+            sums[0] += station.leading_edge().coords * weight;
+            sums[1] += station.trailing_edge().coords * weight;
+            sums[2] += station.up * weight;
         }
+        Self { leading_edge: sums[0].into(), trailing_edge: sums[1].into(), up: sums[2].normalize() }
     }
 
     /// Length \[mm\].

@@ -2,7 +2,7 @@
 
 use nalgebra::Point3;
 
-use super::{ChordLine, LineKind, Planform, Reference, ReferenceLine, ReferencePoint};
+use super::{LineKind, Planform, Reference, ReferenceLine, ReferencePoint, SpanLaw};
 use crate::spec::{Sides, Spec};
 
 /// All construction geometry of a wing, on the sides that are built.
@@ -14,13 +14,14 @@ pub fn reference_geometry(spec: &Spec, planform: &Planform) -> Reference {
         Sides::Both | Sides::Pair => &[("starboard", 1.0), ("port", -1.0)],
     };
     for (k, (side, sign)) in sides.iter().enumerate() {
-        let mirror = |p: Point3<f64>| Point3::new(p.x, p.y * sign, p.z);
+        let mirror = |p: Point3<f64>| Point3::new(p.x, p.y * sign, p.z) + planform.shift;
         let mut add = |name: String, kind: LineKind, points: Vec<Point3<f64>>| {
             let points = straightened(points.into_iter().map(mirror).collect());
             reference.lines.push(ReferenceLine { name, kind, points });
         };
         let stations = &planform.stations;
         let (root, tip) = (&stations[0], &stations[stations.len() - 1]);
+        let last = (stations.len() - 1) as f64;
         if k == 0 {
             add(
                 "root chord".into(),
@@ -29,11 +30,8 @@ pub fn reference_geometry(spec: &Spec, planform: &Planform) -> Reference {
             );
             add("centreline".into(), LineKind::Centreline, centreline(planform));
         }
-        let along = |fraction: f64| {
-            stations
-                .iter()
-                .map(|s| s.place([fraction, 0.0]))
-                .collect::<Vec<_>>()
+        let along = |fraction: f64| -> Vec<Point3<f64>> {
+            places(planform, 0.0, last).into_iter().map(|t| planform.chord(t).at(fraction)).collect()
         };
         add(
             format!("reference leading edge, {side}"),
@@ -87,28 +85,39 @@ fn centreline(planform: &Planform) -> Vec<Point3<f64>> {
 }
 
 /// Corners of the line at a chord fraction from one fraction of the semispan to another, counted along the panels'
-/// extents in the reference plane (along the panels themselves where they have none).
+/// extents in the reference plane.
 fn spanwise(planform: &Planform, chord_fraction: f64, from: f64, to: f64) -> Vec<Point3<f64>> {
-    let total: f64 = planform.panels.iter().map(|panel| panel.width).sum();
-    let mut points = Vec::new();
-    let mut start = 0.0;
-    for (k, panel) in planform.panels.iter().enumerate() {
-        let (low, high) = (from * total - start, to * total - start);
-        let in_panel = low < panel.width && high > 0.0 && panel.width > 0.0;
-        if in_panel {
-            let point = |w: f64| {
-                ChordLine::between(&planform.stations, (k, (w / panel.width).clamp(0.0, 1.0)))
-                    .at(chord_fraction)
-            };
-            if points.is_empty() {
-                points.push(point(low.max(0.0)));
-            }
-            points.push(point(high.min(panel.width)));
-        }
-        start += panel.width;
-    }
-    points
+    let semispan = 0.5 * planform.wing.span;
+    let end = |fraction: f64| {
+        let last = (planform.stations.len() - 1) as f64;
+        if fraction >= 1.0 { last } else { planform.place_of(fraction * semispan) }
+    };
+    let places = places(planform, end(from), end(to));
+    places.into_iter().map(|t| planform.chord(t).at(chord_fraction)).collect()
 }
+
+/// Places of the corners of a spanwise line between two places: its ends and the stations between them; on a smooth wing
+/// many more, so that the broken line is a good picture of the curve.
+fn places(planform: &Planform, from: f64, to: f64) -> Vec<f64> {
+    let parts = match planform.law {
+        SpanLaw::Straight => 1_u32,
+        SpanLaw::Smooth(..) => SMOOTH_PARTS,
+    };
+    let mut places = vec![from];
+    for k in 0..planform.stations.len() - 1 {
+        for j in 0..parts {
+            let t = k as f64 + f64::from(j) / f64::from(parts);
+            if t > from + 1e-9 && t < to - 1e-9 {
+                places.push(t);
+            }
+        }
+    }
+    places.push(to);
+    places
+}
+
+/// Pieces of a reference line between two stations of a smooth wing.
+const SMOOTH_PARTS: u32 = 6;
 
 /// The same line without corners that are none: repeated points, and points on the straight line between neighbours.
 fn straightened(points: Vec<Point3<f64>>) -> Vec<Point3<f64>> {

@@ -1,33 +1,91 @@
 //! Stations, reference wing, mean aerodynamic chord, setting, and the construction lines that show them.
 //!
-//! Everything here is the starboard side (y > 0); the port side is its mirror image.
+//! Everything here is the starboard side (y > 0), with the reference root's leading edge at the origin; the port side is
+//! its mirror image, and [`Planform::shift`] says where the wing goes.
 
 mod chord;
+mod law;
 mod lines;
+mod mac;
 mod reference;
 mod station;
 
 pub use chord::ChordLine;
+pub use law::SpanLaw;
 pub use lines::reference_geometry;
+pub use mac::{MeanAerodynamicChord, ReferenceWing};
 pub use reference::{LineKind, Reference, ReferenceLine, ReferencePoint};
-pub use station::Station;
+pub use station::{Blend, Station};
 
-use nalgebra::Point3;
+use nalgebra::Vector3;
+use thiserror::Error;
 
-use crate::spec::{IncidenceAt, ReferencePlane, Spec};
-use station::lay_out;
+use crate::spec::{
+    IncidenceAt, Outline, Placing, ReferencePlane, Spec, SurfaceKind, TwistKind, TwistLaw,
+};
+use crate::spline::Ends;
+use mac::{Integrals, Shape};
+
+/// Largest difference from a twist that is linear in the span \[rad\]: 0.004°.
+const TWIST: f64 = 0.004 * std::f64::consts::PI / 180.0;
+/// Largest geometric twist that an aerodynamic one may need \[rad\]: 30°.
+const LARGEST_TWIST: f64 = 30.0 * std::f64::consts::PI / 180.0;
+
+/// What cannot be laid out.
+#[derive(Debug, Error, Clone, PartialEq)]
+#[non_exhaustive]
+pub enum Error {
+    /// An aerodynamic twist that needs an absurd geometric one.
+    #[error(
+        "setting.twist: between the zero-lift lines of these sections it needs a geometric twist of {needed:.1}° at the end of panel {panel}; allowed: -30 to 30°. Take a smaller twist, or sections whose zero-lift angles are closer"
+    )]
+    Twist {
+        /// Panel, counted from 1.
+        panel: usize,
+        /// Geometric twist that it needs \[deg\].
+        needed: f64,
+    },
+    /// The fuselage leaves too little wing.
+    #[error(
+        "body.width: the fuselage side is {side:.1} mm from the centreline, and the wing must reach at least {least:.1} mm beyond; its semispan is {semispan:.1} mm"
+    )]
+    Body {
+        /// Half the body's width \[mm\].
+        side: f64,
+        /// Least length beyond \[mm\].
+        least: f64,
+        /// Semispan \[mm\].
+        semispan: f64,
+    },
+    /// The fuselage side cuts a panel whose sections do not stand upright.
+    #[error(
+        "body.width: the fuselage side cuts panel {panel}, whose dihedral is beyond 30°; let the body end inside a flatter panel"
+    )]
+    SteepBody {
+        /// Panel, counted from 1.
+        panel: usize,
+    },
+}
 
 /// A wing laid out: where every section stands, and the reference wing's figures.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug)]
 pub struct Planform {
-    /// Stations from the root outwards, one more than panels.
+    /// Stations from the root outwards.
     pub stations: Vec<Station>,
-    /// The panels between them, as asked.
+    /// Which of them are the spec's own: the root and the end of each panel.
+    pub marks: Vec<usize>,
+    /// How the wing runs between them.
+    pub law: SpanLaw,
+    /// Place where the built wing begins: 0 at the centreline, further out at the side of a fuselage.
+    pub start: f64,
+    /// The panels, as asked.
     pub panels: Vec<PanelShape>,
     /// True where the surface is a fin: its root panel is steeper than 60°, and its reference plane is x-z.
     pub fin: bool,
     /// Figures of the reference wing, both sides counted.
     pub wing: ReferenceWing,
+    /// Where the wing goes: this is added to everything in the end \[mm\].
+    pub shift: Vector3<f64>,
 }
 
 /// One panel of the reference wing.
@@ -35,203 +93,222 @@ pub struct Planform {
 pub struct PanelShape {
     /// Extent in the reference plane, along y or, for a fin, z \[mm\]; may be 0 for an upright end plate.
     pub width: f64,
-    /// Length that its sweep is measured along: plan view, or along the panel where it is steep \[mm\].
-    pub run: f64,
-    /// Sweep of the line of twist axes \[rad\].
+    /// Sweep of the line of twist axes, in plan view, or along the panel where it is steep \[rad\].
     pub axis_sweep: f64,
     /// Dihedral \[rad\].
     pub dihedral: f64,
 }
 
-/// Figures of the reference wing: to the centreline, with a square tip, both sides counted.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct ReferenceWing {
-    /// Area in the reference plane \[mm²\].
-    pub area: f64,
-    /// Span in the reference plane \[mm\].
-    pub span: f64,
-    /// Chord on the centreline \[mm\].
-    pub root_chord: f64,
-    /// Chord at the outer end of the last panel \[mm\].
-    pub tip_chord: f64,
-    /// Mean aerodynamic chord.
-    pub mac: MeanAerodynamicChord,
-}
-
-impl ReferenceWing {
-    /// Span² / area \[-\].
-    pub fn aspect_ratio(&self) -> f64 {
-        self.span * self.span / self.area
-    }
-
-    /// Tip chord / root chord \[-\].
-    pub fn taper_ratio(&self) -> f64 {
-        self.tip_chord / self.root_chord
-    }
-
-    /// Area / span \[mm\].
-    pub fn mean_chord(&self) -> f64 {
-        self.area / self.span
-    }
-}
-
-/// The mean aerodynamic chord of one side.
-///
-/// ```text
-/// c̄ = ∫ c² dy / ∫ c dy    y = ∫ y c dy / ∫ c dy    x_LE = ∫ x_LE c dy / ∫ c dy
-/// ```
-///
-/// Source: USAF Stability and Control DATCOM, sec. 2.2.2 (definition of the mean aerodynamic chord); formula from memory.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct MeanAerodynamicChord {
-    /// Length \[mm\].
-    pub length: f64,
-    /// Distance from the centreline in the reference plane \[mm\].
-    pub offset: f64,
-    /// Panel it lies on, counted from 0, and the fraction of that panel's width.
-    pub place: (usize, f64),
-    /// Its leading edge: at the height and with the turn of the built section at `offset` \[mm\].
-    pub leading_edge: Point3<f64>,
-    /// Its trailing edge, `length` away \[mm\].
-    pub trailing_edge: Point3<f64>,
-    /// Incidence of the built section at `offset` \[rad\].
-    pub incidence: f64,
-    /// Length of the built section's chord at `offset` \[mm\]: that of a panel with straight elements.
-    pub local_chord: f64,
-}
-
-impl MeanAerodynamicChord {
-    /// Its quarter point, the aerodynamic centre of thin-aerofoil theory \[mm\].
-    pub fn aerodynamic_centre(&self) -> Point3<f64> {
-        self.leading_edge + (self.trailing_edge - self.leading_edge) * 0.25
-    }
-}
-
 impl Planform {
     /// Lays out a spec: stations, reference figures, and the root incidence that gives the section at the mean
-    /// aerodynamic chord the incidence asked for.
-    pub fn of(spec: &Spec) -> Self {
+    /// aerodynamic chord the incidence asked for. `zero_lift` holds the zero-lift angle of each of the spec's own
+    /// stations \[rad\], used for aerodynamic twist only.
+    ///
+    /// # Errors
+    ///
+    /// [`enum@Error`] where twist or fuselage cannot be.
+    pub fn of(spec: &Spec, zero_lift: &[f64]) -> Result<Self, Error> {
         let fin = spec.reference_plane() == ReferencePlane::Upright;
-        let (mut stations, panels) = lay_out(spec, fin);
-        let integrals = Integrals::of(&stations, &panels);
-        let place = integrals.place(&panels);
-        let turn_all = |stations: &mut [Station], root: f64| {
-            for (k, station) in stations.iter_mut().enumerate() {
-                let twist = if k == 0 { 0.0 } else { spec.panels[k - 1].twist };
-                station.incidence = root + twist;
+        let twists = twists(spec, zero_lift)?;
+        let (stations, panels) = match spec.outline {
+            Outline::Trapezoid => station::lay_out(spec, fin, &twists),
+            Outline::Ellipse => {
+                let asked = spec.stated.iter().any(|stated| stated.key == "planform.root_chord");
+                station::lay_out_ellipse(spec, &twists, asked)
             }
         };
-        turn_all(&mut stations, spec.setting.incidence);
+        let smooth = spec.surface == SurfaceKind::Smooth || spec.outline == Outline::Ellipse;
+        let (stations, marks, law) = match (spec.outline, smooth) {
+            (Outline::Ellipse, _) => {
+                let last = stations.len() - 1;
+                let parameters = (0..=last).map(|k| k as f64 / last as f64).collect();
+                (stations, vec![0, last], SpanLaw::smooth(parameters, Ends::Continued))
+            }
+            (Outline::Trapezoid, true) => {
+                let total: f64 = spec.panels.iter().map(|panel| panel.span).sum();
+                let mut sum = 0.0;
+                let mut parameters = vec![0.0];
+                for panel in &spec.panels {
+                    sum += panel.span;
+                    parameters.push(if parameters.len() == spec.panels.len() { 1.0 } else { sum / total });
+                }
+                let marks = (0..stations.len()).collect();
+                (stations, marks, SpanLaw::smooth(parameters, Ends::Free))
+            }
+            (Outline::Trapezoid, false) if spec.setting.twist_law == TwistLaw::Linear => {
+                let (stations, marks) = station::with_linear_twist(&stations, TWIST);
+                (stations, marks, SpanLaw::Straight)
+            }
+            (Outline::Trapezoid, false) => {
+                let marks = (0..stations.len()).collect();
+                (stations, marks, SpanLaw::Straight)
+            }
+        };
+        let mut planform = Self {
+            stations,
+            marks,
+            law,
+            start: 0.0,
+            panels,
+            fin,
+            wing: ReferenceWing::default(),
+            shift: Vector3::zeros(),
+        };
+        let shape = match spec.outline {
+            Outline::Trapezoid => Shape::Straight,
+            Outline::Ellipse => {
+                Shape::Ellipse { fraction: spec.panels[0].sweep_at, slope: spec.panels[0].sweep.tan() }
+            }
+        };
+        let integrals = Integrals::of(&planform.stations, planform.fin, shape);
+        let place = planform.place_of(integrals.offset());
+        planform.turn(spec.setting.incidence);
         if spec.setting.at == IncidenceAt::Mac {
             // the turn of the section between two stations is not linear in the root's: a few secant steps
             let mut root = spec.setting.incidence;
             for _ in 0..40 {
-                let missing = spec.setting.incidence - ChordLine::between(&stations, place).incidence();
+                let missing = spec.setting.incidence - planform.chord(place).incidence();
                 root += missing;
-                turn_all(&mut stations, root);
+                planform.turn(root);
                 if missing.abs() < 1e-15 {
                     break;
                 }
             }
         }
-        let local = ChordLine::between(&stations, place);
-        let length = integrals.square / integrals.area;
-        let leading_edge = {
-            // where the wing is cranked the mean chord lies ahead of or behind the local one
-            let (panel, fraction) = place;
-            let nominal = |k: usize| stations[k].nominal_leading_edge;
-            let local_nominal = nominal(panel) * (1.0 - fraction) + nominal(panel + 1) * fraction;
-            let mut point = local.leading_edge;
-            point.x += integrals.leading_edge / integrals.area - local_nominal;
-            point
-        };
-        let mac = MeanAerodynamicChord {
-            length,
-            offset: integrals.moment / integrals.area,
-            place,
-            leading_edge,
-            trailing_edge: leading_edge + local.direction() * length,
-            incidence: local.incidence(),
-            local_chord: local.length(),
-        };
-        let wing = ReferenceWing {
-            area: 2.0 * integrals.area,
-            span: 2.0 * panels.iter().map(|panel| panel.width).sum::<f64>(),
-            root_chord: stations[0].chord,
-            tip_chord: stations[stations.len() - 1].chord,
-            mac,
-        };
-        Self {
-            stations,
-            panels,
-            fin,
-            wing,
+        planform.wing = ReferenceWing::of(&planform, &integrals, place);
+        planform.start = planform.body_side(spec)?;
+        planform.shift = planform.placing(spec);
+        Ok(planform)
+    }
+
+    /// The chord line at place `t`: station counted from the root plus the fraction of the way to the next.
+    pub fn chord(&self, t: f64) -> ChordLine {
+        self.law.chord(&self.stations, t)
+    }
+
+    /// Distance from the centreline in the reference plane at place `t` \[mm\].
+    pub fn offset(&self, t: f64) -> f64 {
+        let axis = self.chord(t).at(self.stations[0].axis_fraction);
+        if self.fin { axis.z.abs() } else { axis.y }
+    }
+
+    /// The place at a distance from the centreline \[mm\]; the nearest end beyond either.
+    pub fn place_of(&self, offset: f64) -> f64 {
+        let last = self.stations.len() - 1;
+        let Some(k) = (0..last).find(|k| offset < self.offset(*k as f64 + 1.0)) else { return last as f64 };
+        let (mut low, mut high) = (k as f64, k as f64 + 1.0);
+        if matches!(self.law, SpanLaw::Straight) {
+            let (from, to) = (self.offset(low), self.offset(high));
+            return low + ((offset - from) / (to - from)).clamp(0.0, 1.0);
+        }
+        for _ in 0..60 {
+            let middle = 0.5 * (low + high);
+            if self.offset(middle) < offset { low = middle } else { high = middle }
+        }
+        0.5 * (low + high)
+    }
+
+    fn turn(&mut self, root: f64) {
+        for station in &mut self.stations {
+            station.incidence = root + station.twist;
         }
     }
 
-    /// Area that both sides' chords enclose in the reference plane when every panel has straight elements \[mm²\]: a
-    /// little less than the reference area where panels are twisted, because chords between the stations are shorter.
-    pub fn straight_element_area(&self) -> f64 {
-        // Simpson's rule on 64 intervals a panel: the integrand is smooth
-        let mut area = 0.0;
+    /// Place of the fuselage side.
+    fn body_side(&self, spec: &Spec) -> Result<f64, Error> {
+        let Some(body) = spec.body.filter(|body| !body.carry_through && !self.fin) else { return Ok(0.0) };
+        let side = 0.5 * body.width;
+        let (semispan, least) = (0.5 * self.wing.span, 0.02 * 0.5 * self.wing.span);
+        if side + least > semispan {
+            return Err(Error::Body { side, least, semispan });
+        }
+        let mut end = 0.0;
         for (k, panel) in self.panels.iter().enumerate() {
-            let mut sum = 0.0;
-            for i in 0..=64_u32 {
-                let weight = if i == 0 || i == 64 {
-                    1.0
-                } else {
-                    f64::from(2 + 2 * (i % 2))
-                };
-                sum += weight * ChordLine::between(&self.stations, (k, f64::from(i) / 64.0)).length();
+            end += panel.width;
+            if side <= end {
+                if spec.panels[k].is_steep() || spec.panels.get(k + 1).is_some_and(|next| next.is_steep()) {
+                    return Err(Error::SteepBody { panel: k + 1 });
+                }
+                break;
             }
-            area += sum / 192.0 * panel.width;
         }
-        2.0 * area
+        let t = self.place_of(side);
+        // not a sliver beside a station
+        let nearest = t.round();
+        let near = (self.offset(nearest) - side).abs() < 1e-3;
+        Ok(if near { nearest } else { t })
+    }
+
+    fn placing(&self, spec: &Spec) -> Vector3<f64> {
+        match spec.placing {
+            Placing::RootLeadingEdge(point) => Vector3::from(point),
+            Placing::AerodynamicCentre([x, y, z]) => {
+                let centre = self.wing.mac.aerodynamic_centre();
+                // a wing stays in its plane of symmetry; a fin goes where it is put
+                let across = if self.fin { y - centre.y } else { 0.0 };
+                Vector3::new(x - centre.x, across, z - centre.z)
+            }
+        }
+    }
+
+    /// Figures of one side that straight (or smooth) elements make between the stations, by Simpson's rule: a little
+    /// less area than the reference wing's where panels are twisted, because chords between stations are shorter.
+    pub fn expected(&self) -> Expected {
+        let mut sums = [0.0; 3];
+        let last = self.stations.len() - 1;
+        for k in 0..last {
+            if (k as f64) + 1.0 <= self.start {
+                continue;
+            }
+            let (from, to) = ((k as f64).max(self.start), k as f64 + 1.0);
+            let at = |i: u32| from + (to - from) * f64::from(i) / 32.0;
+            for i in (0..32).step_by(2) {
+                let offsets = [0, 1, 2].map(|j| self.offset(at(i + j)));
+                let chords = [0, 1, 2].map(|j| self.chord(at(i + j)).length());
+                // Simpson in t, with dy/dt from the parabola through the three offsets
+                let rate = [
+                    -3.0 * offsets[0] + 4.0 * offsets[1] - offsets[2],
+                    offsets[2] - offsets[0],
+                    offsets[0] - 4.0 * offsets[1] + 3.0 * offsets[2],
+                ];
+                for (j, weight) in [1.0, 4.0, 1.0].into_iter().enumerate() {
+                    let width = weight * rate[j] / 6.0;
+                    sums[0] += chords[j] * width;
+                    sums[1] += chords[j] * chords[j] * width;
+                    sums[2] += offsets[j] * chords[j] * width;
+                }
+            }
+        }
+        Expected { area: sums[0], mac: sums[1] / sums[0], offset: sums[2] / sums[0] }
     }
 }
 
-/// Integrals over one side of the reference wing, chord and leading edge linear between stations.
-struct Integrals {
-    area: f64,
-    square: f64,
-    moment: f64,
-    leading_edge: f64,
+/// Figures of one side as it is built.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Expected {
+    /// Area \[mm²\].
+    pub area: f64,
+    /// Mean aerodynamic chord \[mm\].
+    pub mac: f64,
+    /// Its distance from the centreline \[mm\].
+    pub offset: f64,
 }
 
-impl Integrals {
-    fn of(stations: &[Station], panels: &[PanelShape]) -> Self {
-        let mut sums = Self {
-            area: 0.0,
-            square: 0.0,
-            moment: 0.0,
-            leading_edge: 0.0,
+/// Geometric twist of the spec's own stations relative to the root.
+fn twists(spec: &Spec, zero_lift: &[f64]) -> Result<Vec<f64>, Error> {
+    let mut twists = vec![0.0];
+    for (k, panel) in spec.panels.iter().enumerate() {
+        let twist = match spec.setting.twist_kind {
+            TwistKind::Geometric => panel.twist,
+            // an angle of attack counts from the zero-lift line: θ - α₀
+            TwistKind::Aerodynamic => panel.twist + zero_lift[k + 1] - zero_lift[0],
         };
-        let mut start = 0.0;
-        for (pair, panel) in stations.windows(2).zip(panels) {
-            let (a, b) = (pair[0].chord, pair[1].chord);
-            let (p, q) = (pair[0].nominal_leading_edge, pair[1].nominal_leading_edge);
-            let w = panel.width;
-            sums.area += w * (a + b) / 2.0;
-            sums.square += w * (a * a + a * b + b * b) / 3.0;
-            sums.moment += w * (start * (a + b) / 2.0 + w * (a + 2.0 * b) / 6.0);
-            sums.leading_edge += w * (p * (2.0 * a + b) + q * (a + 2.0 * b)) / 6.0;
-            start += w;
+        if spec.setting.twist_kind == TwistKind::Aerodynamic && twist.abs() > LARGEST_TWIST {
+            return Err(Error::Twist { panel: k + 1, needed: twist.to_degrees() });
         }
-        sums
+        twists.push(twist);
     }
-
-    /// Panel and fraction of its width at the mean aerodynamic chord.
-    fn place(&self, panels: &[PanelShape]) -> (usize, f64) {
-        let offset = self.moment / self.area;
-        let mut start = 0.0;
-        for (k, panel) in panels.iter().enumerate() {
-            if offset < start + panel.width {
-                return (k, (offset - start) / panel.width);
-            }
-            start += panel.width;
-        }
-        (panels.len() - 1, 1.0)
-    }
+    Ok(twists)
 }
 
 #[cfg(test)]

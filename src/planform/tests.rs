@@ -65,7 +65,7 @@ fn three_station_wing_has_the_hand_integrated_figures() {
             (4.0, 1.0, 0.5_f64.atan().to_degrees()),
         ],
     );
-    let planform = Planform::of(&wing);
+    let planform = Planform::of(&wing, &[0.0; 3]).unwrap();
     assert!((planform.wing.area - 22.0).abs() < 1e-12);
     assert!((planform.wing.mac.length - 2.0).abs() < 1e-12);
     assert!((planform.wing.mac.offset - 82.0 / 33.0).abs() < 1e-12);
@@ -78,8 +78,8 @@ fn twist_between_stations_follows_the_straight_elements() {
     let mut wing = wing(2.0, &[(4.0, 1.0, 0.0)]);
     wing.panels[0].twist = (-2.0_f64).to_radians();
     wing.setting.at = IncidenceAt::Root;
-    let planform = Planform::of(&wing);
-    let there = super::ChordLine::between(&planform.stations, (0, 0.75));
+    let planform = Planform::of(&wing, &[0.0; 3]).unwrap();
+    let there = planform.chord(0.75);
     let exact = (0.75 * (-2.0_f64).to_radians().sin() / (0.5 + 0.75 * (2.0_f64).to_radians().cos())).atan();
     assert!((there.incidence() - exact).abs() < 1e-14);
     assert!((there.incidence().to_degrees() + 1.2).abs() < 1e-3);
@@ -95,7 +95,7 @@ fn the_incidence_asked_for_is_the_built_section_s_at_the_mean_aerodynamic_chord(
         wing.panels
             .iter_mut()
             .for_each(|panel| panel.dihedral = dihedral.to_radians());
-        let planform = Planform::of(&wing);
+        let planform = Planform::of(&wing, &[0.0; 3]).unwrap();
         assert!((planform.wing.mac.incidence.to_degrees() - 2.0).abs() < 1e-12);
     }
 }

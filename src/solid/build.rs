@@ -106,10 +106,11 @@ impl ShellInProgress {
         inner: &SectionEdges,
         outer: &SectionEdges,
     ) -> Result<(), Error> {
-        let front = line(&inner.nose, &outer.nose);
-        let upper_rear = line(&inner.upper_tail, &outer.upper_tail);
+        let (upper_skin, lower_skin) = (loft.upper(k), loft.lower(k));
+        let front = spanwise(&inner.nose, &outer.nose, &upper_skin.column_curve(false));
+        let upper_rear = spanwise(&inner.upper_tail, &outer.upper_tail, &upper_skin.column_curve(true));
         let lower_rear = if loft.blunt {
-            line(&inner.lower_tail, &outer.lower_tail)
+            spanwise(&inner.lower_tail, &outer.lower_tail, &lower_skin.column_curve(true))
         } else {
             upper_rear.clone()
         };
@@ -211,6 +212,11 @@ fn point(p: Point3<f64>) -> kernel::Point3 {
 
 fn line(a: &Vertex, b: &Vertex) -> Edge {
     Edge::new(a, b, kernel::Curve::Line(kernel::Line(a.point(), b.point())))
+}
+
+/// An edge along the span: a line where the curve is straight.
+fn spanwise(a: &Vertex, b: &Vertex, along: &Curve) -> Edge {
+    if along.knots.degree() == 1 { line(a, b) } else { Edge::new(a, b, curve(along)) }
 }
 
 fn curve(c: &Curve) -> kernel::Curve {

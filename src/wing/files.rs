@@ -2,7 +2,6 @@
 
 use super::{Error, Wing};
 use crate::mesh::Mesh;
-use crate::spec::Sides;
 use crate::write::step::{Attribute, Document, Properties, ReferenceForm, Schema, Value};
 use crate::write::{step, stl};
 
@@ -91,7 +90,7 @@ impl Wing {
     /// Names of the files of a kind, each with its key in the figures: one, or an STL file for each solid of a pair.
     pub fn names(&self, kind: Kind, stem: &str) -> Vec<(String, String)> {
         let ending = kind.name();
-        if kind == Kind::Stl && self.spec.sides == Sides::Pair {
+        if kind == Kind::Stl && self.solids.len() == 2 {
             return vec![
                 (ending.to_owned(), format!("{stem}-starboard.{ending}")),
                 (format!("{ending}_port"), format!("{stem}-port.{ending}")),

@@ -16,7 +16,7 @@ pub use shape::Wing;
 
 use thiserror::Error;
 
-use crate::{airfoil, loft, mesh, solid, write::step};
+use crate::{airfoil, loft, mesh, planform, solid, write::step};
 
 /// What can go wrong after the spec has been read.
 #[derive(Debug, Error)]
@@ -25,6 +25,9 @@ pub enum Error {
     /// The sections cannot be fitted together.
     #[error(transparent)]
     Airfoil(#[from] airfoil::Error),
+    /// The wing cannot be laid out.
+    #[error(transparent)]
+    Planform(#[from] planform::Error),
     /// The sections cannot be joined to a wing.
     #[error(transparent)]
     Loft(#[from] loft::Error),

@@ -3,7 +3,7 @@
 use super::Prepared;
 use crate::airfoil::{self, Profiles};
 use crate::loft::{LEAST_BASE, Loft};
-use crate::planform::Planform;
+use crate::planform::{Planform, SpanLaw};
 use crate::spec::Sides;
 
 /// The notes of a wing.
@@ -53,8 +53,8 @@ pub(super) fn notes(
              merge what is finer."
         ));
     }
-    let shortfall = 1.0 - planform.straight_element_area() / planform.wing.area;
-    if shortfall > 1e-9 {
+    let shortfall = 1.0 - 2.0 * planform.expected().area / planform.wing.area;
+    if shortfall > 1e-9 && planform.start == 0.0 && matches!(planform.law, SpanLaw::Straight) {
         notes.push(format!(
             "Straight elements between twisted stations make the chords between them shorter, and the planform area \
              smaller by {:.1e} of itself, than the trapezoid's; the checks allow for that much.",

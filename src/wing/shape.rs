@@ -1,11 +1,13 @@
 //! The built wing.
 
+use nalgebra::Point3;
+
 use super::asks::asks;
 use super::notes::notes;
 use super::{Error, Prepared};
 use crate::airfoil::{self, Profiles};
-use crate::loft::Loft;
-use crate::measure::{self, Check, Figures, Slices, compare};
+use crate::loft::{Loft, TrailingEdge};
+use crate::measure::{self, Check, Figures, Slices, Spanwise, compare};
 use crate::mesh::{self, Mesh};
 use crate::planform::{Planform, Reference, reference_geometry};
 use crate::solid::{self, Solid};
@@ -51,7 +53,8 @@ impl Wing {
             chosen,
             ..
         } = prepared;
-        let planform = Planform::of(spec);
+        let zero_lift = vec![0.0; spec.panels.len() + 1];
+        let planform = Planform::of(spec, &zero_lift)?;
         let sections: Vec<&airfoil::Section> = sections.iter().collect();
         let profiles = airfoil::fit(&sections, airfoil::TOLERANCE)?;
         let given = sections
@@ -59,13 +62,16 @@ impl Wing {
             .map(|section| section.deviation)
             .fold(0.0, f64::max);
         let section_deviation = given + profiles.deviation;
-        let starboard = Loft::new(&planform, &profiles, chosen, spec.trailing_edge)?;
-        let port = starboard.mirrored();
+        let edge = TrailingEdge { thickness: spec.trailing_edge, ratio: spec.trailing_edge_ratio };
+        let at_origin = Loft::new(&planform, &profiles, chosen, edge)?;
+        let starboard = at_origin.shifted(&planform.shift);
+        let port = at_origin.mirrored().shifted(&planform.shift);
         let groups: Vec<(&str, Vec<&Loft>)> = match spec.sides {
-            Sides::Both => vec![("wing", vec![&starboard, &port])],
+            Sides::Both if planform.start == 0.0 => vec![("wing", vec![&starboard, &port])],
             Sides::Starboard => vec![("starboard wing", vec![&starboard])],
             Sides::Port => vec![("port wing", vec![&port])],
-            Sides::Pair => vec![("starboard wing", vec![&starboard]), ("port wing", vec![&port])],
+            // with a fuselage between them both sides are two solids
+            Sides::Both | Sides::Pair => vec![("starboard wing", vec![&starboard]), ("port wing", vec![&port])],
         };
         let solids = groups
             .iter()
@@ -74,7 +80,7 @@ impl Wing {
         let figures: Vec<Figures> = groups.iter().map(|(_, lofts)| measure::figures(lofts)).collect();
         let meshes: Vec<Mesh> = groups
             .iter()
-            .map(|(_, lofts)| mesh::build(lofts, spec.facet_tolerance))
+            .map(|(_, lofts)| facets(lofts, spec.facet_tolerance))
             .collect();
         for mesh in &meshes {
             mesh::check(mesh, spec.unit.millimetres()).map_err(Error::Mesh)?;
@@ -84,7 +90,12 @@ impl Wing {
         } else {
             &starboard
         };
-        let slices = Slices::of(side, spec.setting.twist_axis, planform.fin);
+        let spanwise = Spanwise {
+            fraction: spec.setting.twist_axis,
+            fin: planform.fin,
+            origin: Point3::from(planform.shift),
+        };
+        let slices = Slices::of(side, spanwise);
         let checks = compare(asks(spec, &planform, &slices));
         let reference = reference_geometry(spec, &planform);
         let notes = notes(prepared, &planform, &starboard, &profiles);
@@ -107,4 +118,17 @@ impl Wing {
     pub fn is_as_asked(&self) -> bool {
         self.checks.iter().all(|check| check.ok)
     }
+}
+
+/// Facets of a loft, or of two that meet; where they are curved along the span, of straight elements close to them.
+fn facets(lofts: &[&Loft], tolerance: f64) -> Mesh {
+    if lofts[0].strips.iter().all(|strip| strip.knots.degree() == 1) {
+        return mesh::build(lofts, tolerance);
+    }
+    let straight: Vec<(Loft, f64)> = lofts.iter().map(|loft| loft.straightened(0.4 * tolerance)).collect();
+    let off = straight.iter().map(|(_, off)| *off).fold(0.0, f64::max);
+    let lofts: Vec<&Loft> = straight.iter().map(|(loft, _)| loft).collect();
+    let mut mesh = mesh::build(&lofts, tolerance - off);
+    mesh.deviation += off;
+    mesh
 }
