@@ -85,8 +85,13 @@ impl Section {
 
     /// The section a share of the way along straight elements to another.
     fn towards(&self, other: &Self, share: f64) -> Self {
-        let mix = |a: &[Point3<f64>], b: &[Point3<f64>]| a.iter().zip(b).map(|(a, b)| a + (b - a) * share).collect();
-        Self { upper: mix(&self.upper, &other.upper), lower: mix(&self.lower, &other.lower) }
+        let mix = |a: &[Point3<f64>], b: &[Point3<f64>]| {
+            a.iter().zip(b).map(|(a, b)| a + (b - a) * share).collect()
+        };
+        Self {
+            upper: mix(&self.upper, &other.upper),
+            lower: mix(&self.lower, &other.lower),
+        }
     }
 
     /// The chord line's front end: where upper and lower side meet \[mm\].
@@ -125,14 +130,22 @@ impl Loft {
                 inner.blended(outer, station.blend.share)
             })
             .collect();
-        let bases: Vec<f64> =
-            planform.stations.iter().zip(&shapes).map(|(station, shape)| trailing_edge.base(station, shape)).collect();
+        let bases: Vec<f64> = planform
+            .stations
+            .iter()
+            .zip(&shapes)
+            .map(|(station, shape)| trailing_edge.base(station, shape))
+            .collect();
         let length = |k: usize| bases[k] * planform.stations[k].chord;
         let blunt = (0..bases.len()).any(|k| length(k) > SHARP);
         let opened = blunt && (0..bases.len()).any(|k| length(k) < LEAST_BASE);
         let sections: Vec<Section> = (planform.stations.iter().zip(&shapes).zip(&bases))
             .map(|((station, shape), base)| {
-                let base = if blunt { base.max(LEAST_BASE / station.chord) } else { 0.0 };
+                let base = if blunt {
+                    base.max(LEAST_BASE / station.chord)
+                } else {
+                    0.0
+                };
                 Section::at(station, &shape.with_base(base))
             })
             .collect();
@@ -142,8 +155,22 @@ impl Loft {
             SpanLaw::Straight => Self {
                 upper_knots,
                 lower_knots,
-                strips: vec![Strip { knots: Knots::bezier(1), rows: Vec::new() }; sections.len() - 1],
-                places: (0..sections.len()).map(|k| if k + 1 == sections.len() { (k - 1, 1.0) } else { (k, 0.0) }).collect(),
+                strips: vec![
+                    Strip {
+                        knots: Knots::bezier(1),
+                        rows: Vec::new()
+                    };
+                    sections.len() - 1
+                ],
+                places: (0..sections.len())
+                    .map(|k| {
+                        if k + 1 == sections.len() {
+                            (k - 1, 1.0)
+                        } else {
+                            (k, 0.0)
+                        }
+                    })
+                    .collect(),
                 sections,
                 blunt,
                 port: false,
@@ -157,7 +184,10 @@ impl Loft {
                     upper_knots,
                     lower_knots,
                     sections: vec![first, last],
-                    strips: vec![Strip { knots: spline.knots.clone(), rows }],
+                    strips: vec![Strip {
+                        knots: spline.knots.clone(),
+                        rows,
+                    }],
                     places: parameters.iter().map(|v| (0, *v)).collect(),
                     blunt,
                     port: false,
@@ -174,7 +204,10 @@ impl Loft {
         if start <= 0.0 {
             return self;
         }
-        let whole = (0..self.places.len() - 1).rev().find(|k| *k as f64 <= start).unwrap_or(0);
+        let whole = (0..self.places.len() - 1)
+            .rev()
+            .find(|k| *k as f64 <= start)
+            .unwrap_or(0);
         let at_station = start - (whole as f64) < 1e-12;
         if let SpanLaw::Smooth(_, parameters) = &planform.law {
             let v = planform.law.parameter(parameters, start);
@@ -219,9 +252,17 @@ impl Loft {
             lower: section.lower.iter().map(&to).collect(),
         };
         let strips = (self.strips.iter())
-            .map(|strip| Strip { knots: strip.knots.clone(), rows: strip.rows.iter().map(section).collect() })
+            .map(|strip| Strip {
+                knots: strip.knots.clone(),
+                rows: strip.rows.iter().map(section).collect(),
+            })
             .collect();
-        Self { sections: self.sections.iter().map(section).collect(), strips, port, ..self.clone() }
+        Self {
+            sections: self.sections.iter().map(section).collect(),
+            strips,
+            port,
+            ..self.clone()
+        }
     }
 
     /// Number of panels.
@@ -231,42 +272,69 @@ impl Loft {
 
     /// The control rows of panel `k`, from its inner to its outer section.
     fn rows(&self, k: usize) -> impl Iterator<Item = &Section> {
-        std::iter::once(&self.sections[k]).chain(&self.strips[k].rows).chain(std::iter::once(&self.sections[k + 1]))
+        std::iter::once(&self.sections[k])
+            .chain(&self.strips[k].rows)
+            .chain(std::iter::once(&self.sections[k + 1]))
     }
 
     /// Upper skin of panel `k`: u from the nose to the trailing edge, v outwards.
     pub fn upper(&self, k: usize) -> Surface {
         let rows = self.rows(k).map(|section| section.upper.clone()).collect();
-        Surface { u: self.upper_knots.clone(), v: self.strips[k].knots.clone(), rows }
+        Surface {
+            u: self.upper_knots.clone(),
+            v: self.strips[k].knots.clone(),
+            rows,
+        }
     }
 
     /// Lower skin of panel `k`: u from the nose to the trailing edge, v outwards.
     pub fn lower(&self, k: usize) -> Surface {
         let rows = self.rows(k).map(|section| section.lower.clone()).collect();
-        Surface { u: self.lower_knots.clone(), v: self.strips[k].knots.clone(), rows }
+        Surface {
+            u: self.lower_knots.clone(),
+            v: self.strips[k].knots.clone(),
+            rows,
+        }
     }
 
     /// Base of the trailing edge of panel `k`: u from the upper edge to the lower, v outwards; `None` where it is sharp.
     pub fn base(&self, k: usize) -> Option<Surface> {
-        let rows = self.rows(k).map(|section| vec![section.upper_tail(), section.lower_tail()]).collect();
-        self.blunt.then(|| Surface { u: Knots::bezier(1), v: self.strips[k].knots.clone(), rows })
+        let rows = self
+            .rows(k)
+            .map(|section| vec![section.upper_tail(), section.lower_tail()])
+            .collect();
+        self.blunt.then(|| Surface {
+            u: Knots::bezier(1),
+            v: self.strips[k].knots.clone(),
+            rows,
+        })
     }
 
     /// Upper side of section `k` as a curve.
     pub fn upper_curve(&self, k: usize) -> Curve {
-        Curve { knots: self.upper_knots.clone(), points: self.sections[k].upper.clone() }
+        Curve {
+            knots: self.upper_knots.clone(),
+            points: self.sections[k].upper.clone(),
+        }
     }
 
     /// Lower side of section `k` as a curve.
     pub fn lower_curve(&self, k: usize) -> Curve {
-        Curve { knots: self.lower_knots.clone(), points: self.sections[k].lower.clone() }
+        Curve {
+            knots: self.lower_knots.clone(),
+            points: self.sections[k].lower.clone(),
+        }
     }
 
     /// A loft with straight elements only that is within `tolerance` \[mm\] of this one, and how far it is from it.
     ///
     /// Strips that are curved along the span are cut into as many straight ones as that takes.
     pub fn straightened(&self, tolerance: f64) -> (Self, f64) {
-        let mut loft = Self { sections: vec![self.sections[0].clone()], strips: Vec::new(), ..self.clone() };
+        let mut loft = Self {
+            sections: vec![self.sections[0].clone()],
+            strips: Vec::new(),
+            ..self.clone()
+        };
         let mut worst = 0.0_f64;
         for k in 0..self.panels() {
             if self.strips[k].knots.degree() > 1 {
@@ -286,7 +354,13 @@ impl Loft {
             }
             loft.sections.push(self.sections[k + 1].clone());
         }
-        loft.strips = vec![Strip { knots: Knots::bezier(1), rows: Vec::new() }; loft.sections.len() - 1];
+        loft.strips = vec![
+            Strip {
+                knots: Knots::bezier(1),
+                rows: Vec::new()
+            };
+            loft.sections.len() - 1
+        ];
         loft.places.clear();
         (loft, worst)
     }
@@ -300,11 +374,16 @@ impl Loft {
             (0..pick(rows[0]).len())
                 .map(|i| {
                     let weighted = rows.iter().zip(&basis);
-                    Point3::from(weighted.fold(Vector3::zeros(), |sum, (row, b)| sum + pick(row)[i].coords * *b))
+                    Point3::from(
+                        weighted.fold(Vector3::zeros(), |sum, (row, b)| sum + pick(row)[i].coords * *b),
+                    )
                 })
                 .collect()
         };
-        let mut section = Section { upper: mix(|s| &s.upper), lower: mix(|s| &s.lower) };
+        let mut section = Section {
+            upper: mix(|s| &s.upper),
+            lower: mix(|s| &s.lower),
+        };
         section.lower[0] = section.upper[0];
         section
     }
@@ -326,7 +405,10 @@ impl TrailingEdge {
         match self.thickness {
             None => profile.base().max(ratio),
             Some(0.0) => ratio,
-            Some(least) => profile.base().max(least / (station.chord * station.mitre)).max(ratio),
+            Some(least) => profile
+                .base()
+                .max(least / (station.chord * station.mitre))
+                .max(ratio),
         }
     }
 }
@@ -337,11 +419,25 @@ fn check(sections: &[Section], planform: &Planform) -> Result<(), Error> {
         let whole = planform.stations[k + 1].axis - planform.stations[k].axis;
         let outwards = Vector3::new(0.0, whole.y, whole.z).normalize();
         let whole = whole.dot(&outwards);
-        let elements = pair[0].upper.iter().zip(&pair[1].upper).chain(pair[0].lower.iter().zip(&pair[1].lower));
-        let shortest = elements.map(|(a, b)| (b - a).dot(&outwards)).fold(f64::INFINITY, f64::min);
+        let elements = pair[0]
+            .upper
+            .iter()
+            .zip(&pair[1].upper)
+            .chain(pair[0].lower.iter().zip(&pair[1].lower));
+        let shortest = elements
+            .map(|(a, b)| (b - a).dot(&outwards))
+            .fold(f64::INFINITY, f64::min);
         if shortest < 1e-3 * whole {
-            let panel = planform.marks.iter().position(|mark| *mark > k).unwrap_or(planform.marks.len() - 1);
-            return Err(Error::TooThick { panel, excess: -shortest, least: whole - shortest });
+            let panel = planform
+                .marks
+                .iter()
+                .position(|mark| *mark > k)
+                .unwrap_or(planform.marks.len() - 1);
+            return Err(Error::TooThick {
+                panel,
+                excess: -shortest,
+                least: whole - shortest,
+            });
         }
     }
     Ok(())
@@ -350,7 +446,12 @@ fn check(sections: &[Section], planform: &Planform) -> Result<(), Error> {
 /// Control rows of the spline through sections.
 fn through(spline: &Interpolation, sections: &[Section]) -> Vec<Section> {
     let column = |pick: fn(&Section) -> &Vec<Point3<f64>>, i: usize| -> Vec<Point3<f64>> {
-        spline.through(&sections.iter().map(|section| pick(section)[i]).collect::<Vec<_>>())
+        spline.through(
+            &sections
+                .iter()
+                .map(|section| pick(section)[i])
+                .collect::<Vec<_>>(),
+        )
     };
     let columns = |pick: fn(&Section) -> &Vec<Point3<f64>>| -> Vec<Vec<Point3<f64>>> {
         (0..pick(&sections[0]).len()).map(|i| column(pick, i)).collect()

@@ -84,9 +84,15 @@ impl Profile {
             return self.clone();
         }
         let mix = |a: &[[f64; 2]], b: &[[f64; 2]]| {
-            a.iter().zip(b).map(|(a, b)| [0, 1].map(|k| a[k] + (b[k] - a[k]) * share)).collect()
+            a.iter()
+                .zip(b)
+                .map(|(a, b)| [0, 1].map(|k| a[k] + (b[k] - a[k]) * share))
+                .collect()
         };
-        Self { upper: mix(&self.upper, &other.upper), lower: mix(&self.lower, &other.lower) }
+        Self {
+            upper: mix(&self.upper, &other.upper),
+            lower: mix(&self.lower, &other.lower),
+        }
     }
 
     /// The profile with its ordinates multiplied by `factor`.

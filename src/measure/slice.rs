@@ -26,7 +26,11 @@ impl Chord {
     /// Turn against the x axis, leading edge up \[rad\].
     pub fn incidence(&self) -> f64 {
         let chord = self.rear - self.front;
-        chord.y.hypot(chord.z).copysign(-chord.dot(&self.up)).atan2(chord.x)
+        chord
+            .y
+            .hypot(chord.z)
+            .copysign(-chord.dot(&self.up))
+            .atan2(chord.x)
     }
 
     /// Point at a chord fraction \[mm\].
@@ -62,7 +66,9 @@ impl Slices {
     /// Takes the skins of one side.
     pub fn of(loft: &Loft, spanwise: Spanwise) -> Self {
         Self {
-            skins: (0..loft.panels()).map(|k| [loft.upper(k), loft.lower(k)]).collect(),
+            skins: (0..loft.panels())
+                .map(|k| [loft.upper(k), loft.lower(k)])
+                .collect(),
             places: loft.places.clone(),
             spanwise,
             sense: if loft.port { -1.0 } else { 1.0 },
@@ -83,7 +89,11 @@ impl Slices {
     /// Distance of a point from the plane that the span is counted from, outwards \[mm\].
     pub fn offset(&self, point: &Point3<f64>) -> f64 {
         let from = point - self.spanwise.origin;
-        if self.spanwise.fin { from.z.abs() } else { from.y * self.sense }
+        if self.spanwise.fin {
+            from.z.abs()
+        } else {
+            from.y * self.sense
+        }
     }
 
     /// The chord of the section whose point at the chord fraction lies `offset` from the centreline \[mm\]. `None` where
@@ -131,7 +141,11 @@ impl Slices {
                 }
             }
         }
-        Planform { area, mac: square / area, offset: moment / area }
+        Planform {
+            area,
+            mac: square / area,
+            offset: moment / area,
+        }
     }
 
     /// The chord line at a panel's spanwise parameter.
@@ -149,7 +163,11 @@ impl Slices {
         let rear = nalgebra::center(&above.point, &below.point);
         let rear_rate = (above.v + below.v) * 0.5;
         let rate = front.v + (rear_rate - front.v) * self.spanwise.fraction;
-        let rate = if self.spanwise.fin { rate.z.abs() } else { rate.y * self.sense };
+        let rate = if self.spanwise.fin {
+            rate.z.abs()
+        } else {
+            rate.y * self.sense
+        };
         (chord(front.point, rear, upper.at(0.3, v)), rate)
     }
 }

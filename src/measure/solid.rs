@@ -80,7 +80,11 @@ impl Sums {
         for u in surface.u.corners().windows(2) {
             for v in surface.v.corners().windows(2) {
                 let straight = surface.v.degree() == 1;
-                let rule: Vec<(f64, f64)> = if straight { four(v[0], v[1]).collect() } else { ten(v[0], v[1]).collect() };
+                let rule: Vec<(f64, f64)> = if straight {
+                    four(v[0], v[1]).collect()
+                } else {
+                    ten(v[0], v[1]).collect()
+                };
                 for (s, weight_u) in ten(u[0], u[1]) {
                     for (t, weight_v) in &rule {
                         let d = surface.derivative(s, *t);

@@ -27,7 +27,11 @@ impl ChordLine {
             sums[1] += station.trailing_edge().coords * weight;
             sums[2] += station.up * weight;
         }
-        Self { leading_edge: sums[0].into(), trailing_edge: sums[1].into(), up: sums[2].normalize() }
+        Self {
+            leading_edge: sums[0].into(),
+            trailing_edge: sums[1].into(),
+            up: sums[2].normalize(),
+        }
     }
 
     /// Length \[mm\].

@@ -20,7 +20,8 @@ impl SpanLaw {
         if parameters.len() < 3 {
             return Self::Straight;
         }
-        Interpolation::new(&parameters, ends).map_or(Self::Straight, |spline| Self::Smooth(spline, parameters))
+        Interpolation::new(&parameters, ends)
+            .map_or(Self::Straight, |spline| Self::Smooth(spline, parameters))
     }
 
     /// The spline's parameter at a place.

@@ -31,7 +31,10 @@ pub fn reference_geometry(spec: &Spec, planform: &Planform) -> Reference {
             add("centreline".into(), LineKind::Centreline, centreline(planform));
         }
         let along = |fraction: f64| -> Vec<Point3<f64>> {
-            places(planform, 0.0, last).into_iter().map(|t| planform.chord(t).at(fraction)).collect()
+            places(planform, 0.0, last)
+                .into_iter()
+                .map(|t| planform.chord(t).at(fraction))
+                .collect()
         };
         add(
             format!("reference leading edge, {side}"),
@@ -90,10 +93,17 @@ fn spanwise(planform: &Planform, chord_fraction: f64, from: f64, to: f64) -> Vec
     let semispan = 0.5 * planform.wing.span;
     let end = |fraction: f64| {
         let last = (planform.stations.len() - 1) as f64;
-        if fraction >= 1.0 { last } else { planform.place_of(fraction * semispan) }
+        if fraction >= 1.0 {
+            last
+        } else {
+            planform.place_of(fraction * semispan)
+        }
     };
     let places = places(planform, end(from), end(to));
-    places.into_iter().map(|t| planform.chord(t).at(chord_fraction)).collect()
+    places
+        .into_iter()
+        .map(|t| planform.chord(t).at(chord_fraction))
+        .collect()
 }
 
 /// Places of the corners of a spanwise line between two places: its ends and the stations between them; on a smooth wing

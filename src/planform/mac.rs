@@ -175,6 +175,12 @@ impl Integrals {
         let offset = moment / area;
         let chord = root * (1.0 - (offset / semi).powi(2)).sqrt();
         let nominal_at_mac = fraction * root + offset * slope - fraction * chord;
-        Self { area, square, moment, leading_edge, nominal_at_mac }
+        Self {
+            area,
+            square,
+            moment,
+            leading_edge,
+            nominal_at_mac,
+        }
     }
 }

@@ -20,9 +20,7 @@ pub use station::{Blend, Station};
 use nalgebra::Vector3;
 use thiserror::Error;
 
-use crate::spec::{
-    IncidenceAt, Outline, Placing, ReferencePlane, Spec, SurfaceKind, TwistKind, TwistLaw,
-};
+use crate::spec::{IncidenceAt, Outline, Placing, ReferencePlane, Spec, SurfaceKind, TwistKind, TwistLaw};
 use crate::spline::Ends;
 use mac::{Integrals, Shape};
 
@@ -44,6 +42,20 @@ pub enum Error {
         panel: usize,
         /// Geometric twist that it needs \[deg\].
         needed: f64,
+    },
+    /// A smooth surface through uneven stations swings out between them.
+    #[error(
+        "build.surface: the smooth surface swings out on panel {panel}: its chord there comes to {chord:.1} mm between stations of {inner:.1} and {outer:.1} mm. Take panels of more even length and taper, put a station between, or surface = \"ruled\""
+    )]
+    Overshoot {
+        /// Panel, counted from 1.
+        panel: usize,
+        /// Chord that it comes to \[mm\].
+        chord: f64,
+        /// Chord at its inner end \[mm\].
+        inner: f64,
+        /// Chord at its outer end \[mm\].
+        outer: f64,
     },
     /// The fuselage leaves too little wing.
     #[error(
@@ -113,7 +125,10 @@ impl Planform {
         let (stations, panels) = match spec.outline {
             Outline::Trapezoid => station::lay_out(spec, fin, &twists),
             Outline::Ellipse => {
-                let asked = spec.stated.iter().any(|stated| stated.key == "planform.root_chord");
+                let asked = spec
+                    .stated
+                    .iter()
+                    .any(|stated| stated.key == "planform.root_chord");
                 station::lay_out_ellipse(spec, &twists, asked)
             }
         };
@@ -122,7 +137,11 @@ impl Planform {
             (Outline::Ellipse, _) => {
                 let last = stations.len() - 1;
                 let parameters = (0..=last).map(|k| k as f64 / last as f64).collect();
-                (stations, vec![0, last], SpanLaw::smooth(parameters, Ends::Continued))
+                (
+                    stations,
+                    vec![0, last],
+                    SpanLaw::smooth(parameters, Ends::Continued),
+                )
             }
             (Outline::Trapezoid, true) => {
                 let total: f64 = spec.panels.iter().map(|panel| panel.span).sum();
@@ -130,7 +149,11 @@ impl Planform {
                 let mut parameters = vec![0.0];
                 for panel in &spec.panels {
                     sum += panel.span;
-                    parameters.push(if parameters.len() == spec.panels.len() { 1.0 } else { sum / total });
+                    parameters.push(if parameters.len() == spec.panels.len() {
+                        1.0
+                    } else {
+                        sum / total
+                    });
                 }
                 let marks = (0..stations.len()).collect();
                 (stations, marks, SpanLaw::smooth(parameters, Ends::Free))
@@ -156,9 +179,10 @@ impl Planform {
         };
         let shape = match spec.outline {
             Outline::Trapezoid => Shape::Straight,
-            Outline::Ellipse => {
-                Shape::Ellipse { fraction: spec.panels[0].sweep_at, slope: spec.panels[0].sweep.tan() }
-            }
+            Outline::Ellipse => Shape::Ellipse {
+                fraction: spec.panels[0].sweep_at,
+                slope: spec.panels[0].sweep.tan(),
+            },
         };
         let integrals = Integrals::of(&planform.stations, planform.fin, shape);
         let place = planform.place_of(integrals.offset());
@@ -175,6 +199,7 @@ impl Planform {
                 }
             }
         }
+        planform.check_smooth()?;
         planform.wing = ReferenceWing::of(&planform, &integrals, place);
         planform.start = planform.body_side(spec)?;
         planform.shift = planform.placing(spec);
@@ -195,7 +220,9 @@ impl Planform {
     /// The place at a distance from the centreline \[mm\]; the nearest end beyond either.
     pub fn place_of(&self, offset: f64) -> f64 {
         let last = self.stations.len() - 1;
-        let Some(k) = (0..last).find(|k| offset < self.offset(*k as f64 + 1.0)) else { return last as f64 };
+        let Some(k) = (0..last).find(|k| offset < self.offset(*k as f64 + 1.0)) else {
+            return last as f64;
+        };
         let (mut low, mut high) = (k as f64, k as f64 + 1.0);
         if matches!(self.law, SpanLaw::Straight) {
             let (from, to) = (self.offset(low), self.offset(high));
@@ -203,7 +230,11 @@ impl Planform {
         }
         for _ in 0..60 {
             let middle = 0.5 * (low + high);
-            if self.offset(middle) < offset { low = middle } else { high = middle }
+            if self.offset(middle) < offset {
+                low = middle
+            } else {
+                high = middle
+            }
         }
         0.5 * (low + high)
     }
@@ -214,13 +245,47 @@ impl Planform {
         }
     }
 
+    /// A smooth surface must not swing out between stations by more than a quarter of their chords.
+    fn check_smooth(&self) -> Result<(), Error> {
+        if matches!(self.law, SpanLaw::Straight) {
+            return Ok(());
+        }
+        for k in 0..self.stations.len() - 1 {
+            let (inner, outer) = (self.stations[k].chord, self.stations[k + 1].chord);
+            for j in 1..16_u32 {
+                let line = self.chord(k as f64 + f64::from(j) / 16.0);
+                let chord = (line.trailing_edge.x - line.leading_edge.x).signum() * line.length();
+                if chord < 0.75 * inner.min(outer) || chord > 1.25 * inner.max(outer) {
+                    let panel = self
+                        .marks
+                        .iter()
+                        .position(|mark| *mark > k)
+                        .unwrap_or(self.panels.len());
+                    return Err(Error::Overshoot {
+                        panel,
+                        chord,
+                        inner,
+                        outer,
+                    });
+                }
+            }
+        }
+        Ok(())
+    }
+
     /// Place of the fuselage side.
     fn body_side(&self, spec: &Spec) -> Result<f64, Error> {
-        let Some(body) = spec.body.filter(|body| !body.carry_through && !self.fin) else { return Ok(0.0) };
+        let Some(body) = spec.body.filter(|body| !body.carry_through && !self.fin) else {
+            return Ok(0.0);
+        };
         let side = 0.5 * body.width;
         let (semispan, least) = (0.5 * self.wing.span, 0.02 * 0.5 * self.wing.span);
         if side + least > semispan {
-            return Err(Error::Body { side, least, semispan });
+            return Err(Error::Body {
+                side,
+                least,
+                semispan,
+            });
         }
         let mut end = 0.0;
         for (k, panel) in self.panels.iter().enumerate() {
@@ -279,7 +344,11 @@ impl Planform {
                 }
             }
         }
-        Expected { area: sums[0], mac: sums[1] / sums[0], offset: sums[2] / sums[0] }
+        Expected {
+            area: sums[0],
+            mac: sums[1] / sums[0],
+            offset: sums[2] / sums[0],
+        }
     }
 }
 
@@ -304,7 +373,10 @@ fn twists(spec: &Spec, zero_lift: &[f64]) -> Result<Vec<f64>, Error> {
             TwistKind::Aerodynamic => panel.twist + zero_lift[k + 1] - zero_lift[0],
         };
         if spec.setting.twist_kind == TwistKind::Aerodynamic && twist.abs() > LARGEST_TWIST {
-            return Err(Error::Twist { panel: k + 1, needed: twist.to_degrees() });
+            return Err(Error::Twist {
+                panel: k + 1,
+                needed: twist.to_degrees(),
+            });
         }
         twists.push(twist);
     }

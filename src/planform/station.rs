@@ -63,7 +63,11 @@ pub struct Blend {
 
 impl Blend {
     const fn only(station: usize) -> Self {
-        Self { inner: station, outer: station, share: 0.0 }
+        Self {
+            inner: station,
+            outer: station,
+            share: 0.0,
+        }
     }
 }
 
@@ -76,9 +80,13 @@ pub(super) fn lay_out(spec: &Spec, fin: bool, twists: &[f64]) -> (Vec<Station>, 
     let (mut x, mut y, mut z, mut chord) = (0.0, 0.0, 0.0, spec.root_chord);
     for k in 0..=spec.panels.len() {
         if let Some(panel) = k.checked_sub(1).map(|inner| &spec.panels[inner]) {
-            let (across, up) = (panel.span * panel.dihedral.cos(), panel.span * panel.dihedral.sin());
+            let (across, up) = (
+                panel.span * panel.dihedral.cos(),
+                panel.span * panel.dihedral.sin(),
+            );
             let run = if panel.is_steep() { panel.span } else { across };
-            let outer = x + panel.sweep_at * chord + run * panel.sweep.tan() - panel.sweep_at * panel.tip_chord;
+            let outer =
+                x + panel.sweep_at * chord + run * panel.sweep.tan() - panel.sweep_at * panel.tip_chord;
             let axis_shift = outer + fraction * panel.tip_chord - (x + fraction * chord);
             panels.push(PanelShape {
                 width: if fin { up.abs() } else { across },
@@ -111,10 +119,17 @@ pub(super) fn lay_out(spec: &Spec, fin: bool, twists: &[f64]) -> (Vec<Station>, 
 ///
 /// s is such that y ends at the semispan, c₀ such that the area is that of the full ellipse on the same span with the
 /// spec's root chord (S = π b c / 4), unless the root chord itself was asked for.
-pub(super) fn lay_out_ellipse(spec: &Spec, twists: &[f64], root_chord_asked: bool) -> (Vec<Station>, Vec<PanelShape>) {
+pub(super) fn lay_out_ellipse(
+    spec: &Spec,
+    twists: &[f64],
+    root_chord_asked: bool,
+) -> (Vec<Station>, Vec<PanelShape>) {
     let panel = &spec.panels[0];
     let fraction = spec.setting.twist_axis;
-    let (across, up) = (panel.span * panel.dihedral.cos(), panel.span * panel.dihedral.sin());
+    let (across, up) = (
+        panel.span * panel.dihedral.cos(),
+        panel.span * panel.dihedral.sin(),
+    );
     let end = ELLIPSE_TIP.acos();
     let semi_axis = 1.0 / end.sin(); // of the semispan
     let full = std::f64::consts::FRAC_PI_4 * 2.0 * spec.root_chord; // 2 S / b
@@ -139,13 +154,21 @@ pub(super) fn lay_out_ellipse(spec: &Spec, twists: &[f64], root_chord_asked: boo
                 up: Vector3::z(),
                 mitre: 1.0,
                 nominal_leading_edge: leading_edge,
-                blend: Blend { inner: 0, outer: 1, share: eta },
+                blend: Blend {
+                    inner: 0,
+                    outer: 1,
+                    share: eta,
+                },
             }
         })
         .collect::<Vec<_>>();
     let (first, last) = (&stations[0], &stations[stations.len() - 1]);
     let axis_sweep = ((last.axis.x - first.axis.x) / across).atan();
-    let shape = PanelShape { width: across, axis_sweep, dihedral: panel.dihedral };
+    let shape = PanelShape {
+        width: across,
+        axis_sweep,
+        dihedral: panel.dihedral,
+    };
     (stations, vec![shape])
 }
 
@@ -185,7 +208,11 @@ fn between(inner: &Station, outer: &Station, fraction: f64) -> Station {
         mitre: mix(inner.mitre, outer.mitre),
         nominal_leading_edge: mix(inner.nominal_leading_edge, outer.nominal_leading_edge),
         // straight elements blend lengths, not ratios
-        blend: Blend { inner: inner.blend.inner, outer: outer.blend.outer, share: fraction * outer.chord / chord },
+        blend: Blend {
+            inner: inner.blend.inner,
+            outer: outer.blend.outer,
+            share: fraction * outer.chord / chord,
+        },
     }
 }
 
@@ -197,7 +224,8 @@ fn worst_twist(pair: &[Station], parts: u32) -> f64 {
         let (a, b) = (at(k), at(k + 1));
         let turn = b.twist - a.twist;
         for share in [0.25, 0.5, 0.75] {
-            let straight = (share * b.chord * turn.sin()).atan2((1.0 - share) * a.chord + share * b.chord * turn.cos());
+            let straight =
+                (share * b.chord * turn.sin()).atan2((1.0 - share) * a.chord + share * b.chord * turn.cos());
             worst = worst.max((straight - share * turn).abs());
         }
     }

@@ -108,9 +108,17 @@ impl ShellInProgress {
     ) -> Result<(), Error> {
         let (upper_skin, lower_skin) = (loft.upper(k), loft.lower(k));
         let front = spanwise(&inner.nose, &outer.nose, &upper_skin.column_curve(false));
-        let upper_rear = spanwise(&inner.upper_tail, &outer.upper_tail, &upper_skin.column_curve(true));
+        let upper_rear = spanwise(
+            &inner.upper_tail,
+            &outer.upper_tail,
+            &upper_skin.column_curve(true),
+        );
         let lower_rear = if loft.blunt {
-            spanwise(&inner.lower_tail, &outer.lower_tail, &lower_skin.column_curve(true))
+            spanwise(
+                &inner.lower_tail,
+                &outer.lower_tail,
+                &lower_skin.column_curve(true),
+            )
         } else {
             upper_rear.clone()
         };
@@ -216,7 +224,11 @@ fn line(a: &Vertex, b: &Vertex) -> Edge {
 
 /// An edge along the span: a line where the curve is straight.
 fn spanwise(a: &Vertex, b: &Vertex, along: &Curve) -> Edge {
-    if along.knots.degree() == 1 { line(a, b) } else { Edge::new(a, b, curve(along)) }
+    if along.knots.degree() == 1 {
+        line(a, b)
+    } else {
+        Edge::new(a, b, curve(along))
+    }
 }
 
 fn curve(c: &Curve) -> kernel::Curve {

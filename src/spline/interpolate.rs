@@ -78,7 +78,9 @@ impl Interpolation {
                 let sum = points
                     .iter()
                     .enumerate()
-                    .fold(nalgebra::Vector3::zeros(), |sum, (k, p)| sum + p.coords * self.matrix[(row, k)]);
+                    .fold(nalgebra::Vector3::zeros(), |sum, (k, p)| {
+                        sum + p.coords * self.matrix[(row, k)]
+                    });
                 Point3::from(sum)
             })
             .collect();
@@ -93,7 +95,11 @@ impl Interpolation {
     pub fn weights(&self, t: f64) -> Vec<f64> {
         let (first, basis) = self.knots.basis(t);
         let row = DVector::from_fn(self.matrix.nrows(), |k, _| {
-            if k >= first && k <= first + self.knots.degree() { basis[k - first] } else { 0.0 }
+            if k >= first && k <= first + self.knots.degree() {
+                basis[k - first]
+            } else {
+                0.0
+            }
         });
         (row.transpose() * &self.matrix).iter().copied().collect()
     }
@@ -145,7 +151,11 @@ mod tests {
     use super::{Ends, Interpolation, part_from};
 
     fn parameters(n: u32) -> Vec<f64> {
-        (0..n).map(|k| f64::from(k) / f64::from(n - 1)).map(|t| 0.7 * t + 0.3 * t * t).map(|t| t / 1.0).collect()
+        (0..n)
+            .map(|k| f64::from(k) / f64::from(n - 1))
+            .map(|t| 0.7 * t + 0.3 * t * t)
+            .map(|t| t / 1.0)
+            .collect()
     }
 
     #[test]
@@ -155,19 +165,30 @@ mod tests {
                 let mut at = parameters(n);
                 let last = at.len() - 1;
                 at[last] = 1.0;
-                let points: Vec<Point3<f64>> =
-                    at.iter().map(|t| Point3::new(t * 3.0, (5.0 * t).sin(), (3.0 * t).exp())).collect();
+                let points: Vec<Point3<f64>> = at
+                    .iter()
+                    .map(|t| Point3::new(t * 3.0, (5.0 * t).sin(), (3.0 * t).exp()))
+                    .collect();
                 let interpolation = Interpolation::new(&at, ends).unwrap();
-                let curve = Curve { knots: interpolation.knots.clone(), points: interpolation.through(&points) };
+                let curve = Curve {
+                    knots: interpolation.knots.clone(),
+                    points: interpolation.through(&points),
+                };
                 for (t, point) in at.iter().zip(&points) {
                     assert!((curve.at(*t) - point).norm() < 1e-12, "{ends:?} {n}");
                 }
                 for cut in [0.2, 0.37, 0.5, at[last / 2].clamp(0.01, 0.99)] {
                     let (knots, control) = part_from(&curve.knots, &curve.points, cut).unwrap();
-                    let part = Curve { knots, points: control };
+                    let part = Curve {
+                        knots,
+                        points: control,
+                    };
                     for k in 0..=20 {
                         let t = cut + (1.0 - cut) * f64::from(k) / 20.0;
-                        assert!((part.at(t) - curve.at(t)).norm() < 1e-12, "{ends:?} {n} {cut} {t}");
+                        assert!(
+                            (part.at(t) - curve.at(t)).norm() < 1e-12,
+                            "{ends:?} {n} {cut} {t}"
+                        );
                     }
                 }
             }
@@ -180,7 +201,10 @@ mod tests {
         let law = |t: f64| Point3::new(t, 1.0 - t * t, 2.0 * t * t * t - t);
         let points: Vec<_> = at.iter().map(|t| law(*t)).collect();
         let interpolation = Interpolation::new(&at, Ends::Continued).unwrap();
-        let curve = Curve { knots: interpolation.knots.clone(), points: interpolation.through(&points) };
+        let curve = Curve {
+            knots: interpolation.knots.clone(),
+            points: interpolation.through(&points),
+        };
         for k in 0..=50 {
             let t = f64::from(k) / 50.0;
             assert!((curve.at(t) - law(t)).norm() < 1e-13);

@@ -11,7 +11,10 @@ const ANGLE: f64 = 0.01 * std::f64::consts::PI / 180.0;
 
 /// All asks of a wing, measured on one side.
 pub(super) fn asks(spec: &Spec, planform: &Planform, slices: &Slices) -> Vec<Ask> {
-    let mut asks = Asks { list: Vec::new(), length: RELATIVE * planform.wing.span };
+    let mut asks = Asks {
+        list: Vec::new(),
+        length: RELATIVE * planform.wing.span,
+    };
     let sides = match spec.sides {
         Sides::Both | Sides::Pair => 2.0,
         Sides::Starboard | Sides::Port => 1.0,
@@ -30,7 +33,13 @@ struct Asks {
 
 impl Asks {
     fn add(&mut self, name: impl Into<String>, quantity: Quantity, asked: f64, built: f64, allowed: f64) {
-        self.list.push(Ask { name: name.into(), quantity, asked, built, allowed });
+        self.list.push(Ask {
+            name: name.into(),
+            quantity,
+            asked,
+            built,
+            allowed,
+        });
     }
 
     fn length(&mut self, name: impl Into<String>, asked: f64, built: f64) {
@@ -53,22 +62,45 @@ impl Asks {
         let whole = planform.start == 0.0 && matches!(planform.law, crate::planform::SpanLaw::Straight)
             || spec.outline == Outline::Ellipse && planform.start == 0.0;
         let asked = if whole { reference } else { expected.area };
-        let mut name = if planform.start > 0.0 { "exposed area" } else { "planform area" }.to_owned();
+        let mut name = if planform.start > 0.0 {
+            "exposed area"
+        } else {
+            "planform area"
+        }
+        .to_owned();
         if sides < 2.0 {
             name += ", one side";
         }
         // the smooth outline of an ellipse is met within 1e-4 of its area
-        let relative = if spec.outline == Outline::Ellipse { 1e-4 } else { RELATIVE };
+        let relative = if spec.outline == Outline::Ellipse {
+            1e-4
+        } else {
+            RELATIVE
+        };
         let allowed = relative * reference + (asked - expected.area).abs();
-        self.add(name, Quantity::Area, asked * sides, found.area * sides, allowed * sides);
+        self.add(
+            name,
+            Quantity::Area,
+            asked * sides,
+            found.area * sides,
+            allowed * sides,
+        );
         let axis = spec.setting.twist_axis;
         let last = slices.stations() - 1;
         let tip = slices.offset(&slices.at_station(last).at(axis));
         let span = 0.5 * planform.wing.span;
-        self.length(if sides > 1.0 { "span" } else { "semispan" }, span * sides, tip * sides);
+        self.length(
+            if sides > 1.0 { "span" } else { "semispan" },
+            span * sides,
+            tip * sides,
+        );
         if planform.start > 0.0 {
             let side = slices.offset(&slices.at_station(0).at(axis));
-            self.length("fuselage side from the centreline", planform.offset(planform.start), side);
+            self.length(
+                "fuselage side from the centreline",
+                planform.offset(planform.start),
+                side,
+            );
         }
     }
 
@@ -77,14 +109,34 @@ impl Asks {
         let (mac, found, expected) = (&planform.wing.mac, slices.planform(), planform.expected());
         if planform.start == 0.0 {
             let allowed = self.length + (mac.length - expected.mac).abs();
-            self.add("mean aerodynamic chord", Quantity::Length, mac.length, found.mac, allowed);
+            self.add(
+                "mean aerodynamic chord",
+                Quantity::Length,
+                mac.length,
+                found.mac,
+                allowed,
+            );
             let allowed = self.length + (mac.offset - expected.offset).abs();
-            self.add("its distance from the centreline", Quantity::Length, mac.offset, found.offset, allowed);
+            self.add(
+                "its distance from the centreline",
+                Quantity::Length,
+                mac.offset,
+                found.offset,
+                allowed,
+            );
         }
         if let Some(chord) = slices.at_offset(mac.offset) {
             self.length("chord of the section there", mac.local_chord, chord.length());
-            let asked = if spec.setting.at == IncidenceAt::Mac { spec.setting.incidence } else { mac.incidence };
-            self.angle("incidence at the mean aerodynamic chord", asked, chord.incidence());
+            let asked = if spec.setting.at == IncidenceAt::Mac {
+                spec.setting.incidence
+            } else {
+                mac.incidence
+            };
+            self.angle(
+                "incidence at the mean aerodynamic chord",
+                asked,
+                chord.incidence(),
+            );
         }
     }
 
@@ -97,7 +149,11 @@ impl Asks {
         let on_solid = |mark: usize| mark.checked_sub(skipped);
         let inner: ChordLine = planform.chord(planform.start);
         let first = slices.at_station(0);
-        let name = if planform.start > 0.0 { "at the fuselage side" } else { "at the root" };
+        let name = if planform.start > 0.0 {
+            "at the fuselage side"
+        } else {
+            "at the root"
+        };
         self.length(format!("chord {name}"), inner.length(), first.length());
         let asked = match spec.setting.at {
             IncidenceAt::Root if planform.start == 0.0 => spec.setting.incidence,
@@ -108,32 +164,55 @@ impl Asks {
         let mut before = (inner, first);
         for (k, panel) in planform.panels.iter().enumerate() {
             let mark = planform.marks[k + 1];
-            let Some(station) = on_solid(mark).filter(|station| *station > 0) else { continue };
+            let Some(station) = on_solid(mark).filter(|station| *station > 0) else {
+                continue;
+            };
             let found = slices.at_station(station);
             let asked = &planform.stations[mark];
-            let place = if k + 1 == panels { "tip".to_owned() } else { format!("end of panel {}", k + 1) };
-            let of = if panels == 1 { String::new() } else { format!(" of panel {}", k + 1) };
+            let place = if k + 1 == panels {
+                "tip".to_owned()
+            } else {
+                format!("end of panel {}", k + 1)
+            };
+            let of = if panels == 1 {
+                String::new()
+            } else {
+                format!(" of panel {}", k + 1)
+            };
             self.length(format!("chord at the {place}"), asked.chord, found.length());
             let way = found.at(axis) - before.1.at(axis);
             let across = if spec.sides == Sides::Port { -way.y } else { way.y };
-            let run = if spec.panels[k].is_steep() { across.hypot(way.z) } else { across };
+            let run = if spec.panels[k].is_steep() {
+                across.hypot(way.z)
+            } else {
+                across
+            };
             let line = if (axis - 0.25).abs() < 1e-12 {
                 "quarter-chord".to_owned()
             } else {
                 format!("{} %-chord", 100.0 * axis)
             };
-            let sweep = if planform.start > 0.0 && before.0 == inner || spec.outline == Outline::Ellipse {
+            let from_side = planform.start > 0.0 && before.0 == inner;
+            let (sweep, dihedral) = if from_side || spec.outline == Outline::Ellipse {
                 // from a place that is no station: as laid out between the same two places
                 let way = planform.chord(mark as f64).at(axis) - before.0.at(axis);
-                (way.x / way.y).atan()
+                ((way.x / way.y).atan(), way.z.atan2(way.y))
             } else {
-                panel.axis_sweep
+                (panel.axis_sweep, panel.dihedral)
             };
             self.angle(format!("{line} sweep{of}"), sweep, (way.x / run).atan());
-            self.angle(format!("dihedral{of}"), panel.dihedral, way.z.atan2(across));
+            self.angle(format!("dihedral{of}"), dihedral, way.z.atan2(across));
             // twist counts from the root on the centreline, which a fuselage may hide: then by the incidence
-            let root = if planform.start > 0.0 { planform.stations[0].incidence } else { first.incidence() };
-            self.angle(format!("twist at the {place}"), asked.twist, found.incidence() - root);
+            let root = if planform.start > 0.0 {
+                planform.stations[0].incidence
+            } else {
+                first.incidence()
+            };
+            self.angle(
+                format!("twist at the {place}"),
+                asked.twist,
+                found.incidence() - root,
+            );
             before = (planform.chord(mark as f64), found);
         }
     }

@@ -9,6 +9,8 @@ mod notes;
 mod prepare;
 mod record;
 mod shape;
+#[cfg(test)]
+mod tests;
 
 pub use files::{Kind, Options};
 pub use prepare::{Prepared, prepare};

@@ -18,7 +18,8 @@ impl Wing {
         let sign = if self.spec.sides == Sides::Port { -1.0 } else { 1.0 };
         let point = |p: nalgebra::Point3<f64>| [p.x / unit, p.y / unit, p.z / unit];
         let shift = self.planform.shift;
-        let side = |p: nalgebra::Point3<f64>| point(nalgebra::Point3::new(p.x, p.y * sign + 0.0, p.z) + shift);
+        let side =
+            |p: nalgebra::Point3<f64>| point(nalgebra::Point3::new(p.x, p.y * sign + 0.0, p.z) + shift);
         let leading_edge = side(mac.leading_edge);
         let volume: f64 = self.figures.iter().map(|f| f.volume).sum();
         let moment = self.figures.iter().fold(nalgebra::Vector3::zeros(), |sum, f| {

@@ -62,7 +62,10 @@ impl Wing {
             .map(|section| section.deviation)
             .fold(0.0, f64::max);
         let section_deviation = given + profiles.deviation;
-        let edge = TrailingEdge { thickness: spec.trailing_edge, ratio: spec.trailing_edge_ratio };
+        let edge = TrailingEdge {
+            thickness: spec.trailing_edge,
+            ratio: spec.trailing_edge_ratio,
+        };
         let at_origin = Loft::new(&planform, &profiles, chosen, edge)?;
         let starboard = at_origin.shifted(&planform.shift);
         let port = at_origin.mirrored().shifted(&planform.shift);
@@ -71,7 +74,9 @@ impl Wing {
             Sides::Starboard => vec![("starboard wing", vec![&starboard])],
             Sides::Port => vec![("port wing", vec![&port])],
             // with a fuselage between them both sides are two solids
-            Sides::Both | Sides::Pair => vec![("starboard wing", vec![&starboard]), ("port wing", vec![&port])],
+            Sides::Both | Sides::Pair => {
+                vec![("starboard wing", vec![&starboard]), ("port wing", vec![&port])]
+            }
         };
         let solids = groups
             .iter()
@@ -125,7 +130,10 @@ fn facets(lofts: &[&Loft], tolerance: f64) -> Mesh {
     if lofts[0].strips.iter().all(|strip| strip.knots.degree() == 1) {
         return mesh::build(lofts, tolerance);
     }
-    let straight: Vec<(Loft, f64)> = lofts.iter().map(|loft| loft.straightened(0.4 * tolerance)).collect();
+    let straight: Vec<(Loft, f64)> = lofts
+        .iter()
+        .map(|loft| loft.straightened(0.4 * tolerance))
+        .collect();
     let off = straight.iter().map(|(_, off)| *off).fold(0.0, f64::max);
     let lofts: Vec<&Loft> = straight.iter().map(|(loft, _)| loft).collect();
     let mut mesh = mesh::build(&lofts, tolerance - off);
