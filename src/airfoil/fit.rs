@@ -17,6 +17,9 @@ pub const TOLERANCE: f64 = 1e-6;
 const CLOSE: f64 = 3e-5;
 /// Most knots a side may take before the fit is given up.
 const MOST_KNOTS: usize = 400;
+/// Knots that will be missed by more than this many times the tolerance are not tried to be taken out: of those that
+/// could be, 3 % are above it.
+const MISSED: f64 = 30.0;
 
 /// All sections of a wing, fitted on shared knots.
 #[derive(Clone, Debug, PartialEq)]
@@ -113,14 +116,7 @@ impl Profile {
 pub fn fit(sections: &[&Section], tolerance: f64) -> Result<Profiles, Error> {
     let side = |pick: fn(&Section) -> &Side| {
         let sides: Vec<&Side> = sections.iter().map(|section| pick(section)).collect();
-        fit_sides(&sides, tolerance).ok_or_else(|| Error::Fit {
-            sections: sections
-                .iter()
-                .map(|section| section.name.clone())
-                .collect::<Vec<_>>()
-                .join(", "),
-            tolerance,
-        })
+        fit_sides(&sides, tolerance).ok_or_else(|| why_not(sections, tolerance))
     };
     let upper = side(|section| &section.upper)?;
     let lower = side(|section| &section.lower)?;
@@ -134,6 +130,32 @@ pub fn fit(sections: &[&Section], tolerance: f64) -> Result<Profiles, Error> {
         profiles,
         deviation,
     })
+}
+
+/// Corners of the surface that are blunter than this are no reason why a fit fails \[rad\].
+const CORNER: f64 = 0.01;
+
+/// Why sections could not be fitted: a corner of one of them, or else that they are too different or too rough.
+fn why_not(sections: &[&Section], tolerance: f64) -> Error {
+    let corners = sections.iter().flat_map(|section| {
+        let breaks = section.upper.breaks().into_iter().chain(section.lower.breaks());
+        breaks.map(|b| (section.name.clone(), b.place, b.corner))
+    });
+    match corners.max_by(|a, b| a.2.total_cmp(&b.2)) {
+        Some((name, place, corner)) if corner > CORNER => Error::Corner {
+            name,
+            percent: 100.0 * place,
+            degrees: corner.to_degrees(),
+        },
+        _ => Error::Fit {
+            sections: sections
+                .iter()
+                .map(|section| section.name.as_str())
+                .collect::<Vec<_>>()
+                .join(", "),
+            tolerance,
+        },
+    }
 }
 
 struct Fitted {
@@ -168,16 +190,15 @@ fn fit_sides(sides: &[&Side], tolerance: f64) -> Option<Fitted> {
     let breaks = breaks(sides);
     let mut own: Vec<f64> = sides.iter().flat_map(|side| side.law_knots()).collect();
     own.sort_by(f64::total_cmp);
-    let grid = sample(sides, &breaks, own.len());
-    // the deviation between the fitted parameters may be a little larger than at them: then aim lower
-    let (best, deviation) = [0.97, 0.7, 0.4].into_iter().find_map(|share| {
-        let best = refine(
-            starting_knots(&breaks, &own, share * tolerance),
-            &grid,
-            share * tolerance,
-        )?;
-        let deviation = measure(&best, &grid).max(best.worst);
-        (deviation <= tolerance).then_some((best, deviation))
+    // where the deviation between the fitted parameters is larger than at them, they are taken closer, or less is allowed
+    let (best, deviation) = [1, 2, 4].into_iter().find_map(|density| {
+        let grid = sample(sides, &breaks, own.len(), density);
+        [0.97, 0.7].into_iter().find_map(|share| {
+            let start = starting_knots(&breaks, &own, share * tolerance);
+            let best = refine(start, &grid, share * tolerance)?;
+            let deviation = measure(&best, &grid).max(best.worst);
+            (deviation <= tolerance).then_some((best, deviation))
+        })
     })?;
     let points = (sides.iter().zip(&best.coefficients))
         .map(|(side, y)| {
@@ -196,7 +217,7 @@ fn fit_sides(sides: &[&Side], tolerance: f64) -> Option<Fitted> {
 
 /// Adds knots where the deviation is above `aim`, then takes out those that are not needed.
 fn refine(mut interior: Vec<f64>, grid: &Grid, aim: f64) -> Option<Attempt> {
-    let mut best = attempt(&interior, grid)?;
+    let mut best = attempt(&interior, grid, f64::INFINITY)?;
     while best.worst > aim {
         let corners = best.knots.corners();
         let mut finer = interior.clone();
@@ -210,7 +231,7 @@ fn refine(mut interior: Vec<f64>, grid: &Grid, aim: f64) -> Option<Attempt> {
         }
         finer.sort_by(f64::total_cmp);
         interior = finer;
-        best = attempt(&interior, grid)?;
+        best = attempt(&interior, grid, f64::INFINITY)?;
     }
     Some(thin_out(best, interior, grid, aim))
 }
@@ -226,7 +247,7 @@ fn breaks(sides: &[&Side]) -> Vec<Break> {
 /// rounded off within `aim` (a jump j is missed by about j h at a knot spacing h).
 fn starting_knots(breaks: &[Break], own: &[f64], aim: f64) -> Vec<f64> {
     let mut knots: Vec<f64> = Vec::new();
-    for Break { s, kink } in breaks {
+    for Break { s, kink, .. } in breaks {
         let spacing = (aim / kink.abs().max(1e-12)).max(CLOSE);
         if spacing < 0.03 {
             let near = knots
@@ -260,16 +281,18 @@ fn starting_knots(breaks: &[Break], own: &[f64], aim: f64) -> Vec<f64> {
 }
 
 /// Distances from a break at which a side is sampled: closer and closer, down to the least knot span.
-const NEAR_BREAK: usize = 36;
+const NEAR_BREAK: u32 = 36;
 
-fn sample(sides: &[&Side], breaks: &[Break], own: usize) -> Grid {
-    let steps = 160.max(6 * own);
+/// Samples the sides, `density` times as closely as usual.
+fn sample(sides: &[&Side], breaks: &[Break], own: usize, density: u32) -> Grid {
+    let steps = 160.max(6 * own) * density as usize;
+    let closer = 0.82_f64.powf(1.0 / f64::from(density));
     let mut parameters: Vec<f64> = (0..=steps).map(|i| i as f64 / steps as f64).collect();
     for Break { s, .. } in breaks {
         let mut distance = 0.04;
-        for _ in 0..NEAR_BREAK {
+        for _ in 0..NEAR_BREAK * density {
             parameters.extend([s - distance, s + distance]);
-            distance *= 0.82;
+            distance *= closer;
         }
     }
     parameters.retain(|s| *s > 0.0 && *s < 1.0);
@@ -281,8 +304,8 @@ fn sample(sides: &[&Side], breaks: &[Break], own: usize) -> Grid {
         .collect();
     let targets = (sides.iter())
         .map(|side| Target {
-            values: parameters.iter().map(|s| side.y(*s)).collect(),
-            checks: checks.iter().map(|s| side.y(*s)).collect(),
+            values: side.sample(&parameters),
+            checks: side.sample(&checks),
             nose: side.nose_derivatives(),
             tail: side.y(1.0),
         })
@@ -294,7 +317,8 @@ fn sample(sides: &[&Side], breaks: &[Break], own: usize) -> Grid {
     }
 }
 
-fn attempt(interior: &[f64], grid: &Grid) -> Option<Attempt> {
+/// Fits all sides on knots; `None` where one is found to be off by more than `limit`.
+fn attempt(interior: &[f64], grid: &Grid, limit: f64) -> Option<Attempt> {
     let knots = Knots::clamped(MAX_DEGREE, 0.0, 1.0, interior)?;
     // three coefficients hold position, slope and curvature at the nose, the last one the trailing edge
     let system = LeastSquares::new(&knots, grid.parameters.iter().map(|s| (*s, 1.0)), 3, 1)?;
@@ -316,6 +340,9 @@ fn attempt(interior: &[f64], grid: &Grid) -> Option<Attempt> {
             }
             spans[span] = spans[span].max(deviation.abs());
         }
+        if spans.iter().any(|worst| *worst > limit) {
+            return None;
+        }
         coefficients.push(fit.function.coefficients);
     }
     let worst = spans.iter().copied().fold(0.0, f64::max);
@@ -327,28 +354,59 @@ fn attempt(interior: &[f64], grid: &Grid) -> Option<Attempt> {
     })
 }
 
-/// Takes out knots, those with the least deviation around them first, as long as the rest stays within `aim`.
+/// Takes out knots, those that will be missed least first, as long as the rest stays within `aim`.
 fn thin_out(mut best: Attempt, mut interior: Vec<f64>, grid: &Grid, aim: f64) -> Attempt {
     let mut kept: Vec<f64> = Vec::new(); // knots that were tried and are needed
     loop {
-        let mut order: Vec<(f64, usize)> = (interior.iter().enumerate())
-            .filter(|(_, knot)| !kept.contains(knot))
-            .map(|(i, _)| (best.spans[i].max(best.spans[i + 1]), i))
-            .collect();
-        order.sort_by(|a, b| a.0.total_cmp(&b.0));
-        let Some(&(_, candidate)) = order.first() else {
+        let missed = missed(&best);
+        let candidate = (interior.iter().zip(&missed).enumerate())
+            .filter(|(_, (knot, _))| !kept.contains(knot))
+            .map(|(i, (_, missed))| (i, *missed))
+            .min_by(|a, b| a.1.total_cmp(&b.1));
+        let Some((candidate, _)) = candidate.filter(|(_, missed)| *missed < MISSED * aim) else {
             return best;
         };
         let mut fewer = interior.clone();
         let knot = fewer.remove(candidate);
-        match attempt(&fewer, grid) {
-            Some(trial) if trial.worst <= aim => {
+        match attempt(&fewer, grid, aim) {
+            Some(trial) => {
                 best = trial;
                 interior = fewer;
             }
-            _ => kept.push(knot),
+            None => kept.push(knot),
         }
     }
+}
+
+/// About what the fit would be off by without each of its interior knots: the jump of the pth derivative there, over the
+/// jump that a basis function around the knot has, whose height is about one.
+fn missed(best: &Attempt) -> Vec<f64> {
+    let values = best.knots.values();
+    let count = best.knots.count() - MAX_DEGREE - 1;
+    let mut missed = vec![0.0_f64; count];
+    for coefficients in &best.coefficients {
+        // the pth derivative, one value a span
+        let mut d = coefficients.clone();
+        for level in (1..=MAX_DEGREE).rev() {
+            let from = MAX_DEGREE + 1 - level;
+            for i in 0..d.len() - 1 {
+                d[i] = level as f64 * (d[i + 1] - d[i]) / (values[from + i + level] - values[from + i]);
+            }
+            d.pop();
+        }
+        for (i, missed) in missed.iter_mut().enumerate() {
+            let at = MAX_DEGREE + 1 + i;
+            let around = &values[at - 3..=at + 3];
+            let factorial = 120.0;
+            let product: f64 = (around.iter().enumerate())
+                .filter(|(k, _)| *k != 3)
+                .map(|(_, knot)| (knot - values[at]).abs())
+                .product();
+            let height = product / (factorial * (around[6] - around[0]));
+            *missed = missed.max((d[i + 1] - d[i]).abs() * height);
+        }
+    }
+    missed
 }
 
 /// Largest deviation between the parameters that were fitted.

@@ -9,31 +9,9 @@
 //! R. M. Pinkerton, NACA Report 537 (1935), 5-digit mean lines; constants as in NASA TM 4741 (1996).
 
 use super::taylor::Taylor;
+use super::thickness::{Curve, Thickness};
 
-/// Thickness of the 4- and 5-digit families, half thickness over the chord:
-/// `y_t = t/0.20 (0.2969 √x - 0.1260 x - 0.3516 x² + 0.2843 x³ - 0.1015 x⁴)`.
-///
-/// Closed with the last coefficient -0.1036 in place of -0.1015, the common published variant; open it ends on a base
-/// of 0.021 t.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Thickness {
-    /// Thickness ratio t \[-\].
-    pub ratio: f64,
-    /// Whether the trailing edge is closed.
-    pub closed: bool,
-}
-
-impl Thickness {
-    /// Half thickness by `t` = √x, where `t` may be slightly negative.
-    fn at(&self, t: Taylor) -> Taylor {
-        let last = if self.closed { -0.1036 } else { -0.1015 };
-        let x = t * t;
-        let even = x.polynomial(&[0.0, -0.1260, -0.3516, 0.2843, last]);
-        (t * 0.2969 + even) * (self.ratio / 0.20)
-    }
-}
-
-/// Mean line of a section.
+/// Mean line of a section. Negative constants give the mirrored line.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub enum Camber {
     /// Straight: a symmetric section.
@@ -58,7 +36,7 @@ pub enum Camber {
 
 impl Camber {
     /// Ordinate and slope of the mean line by x.
-    fn at(&self, x: Taylor) -> (Taylor, Taylor) {
+    fn at<const N: usize>(&self, x: Taylor<N>) -> (Taylor<N>, Taylor<N>) {
         match *self {
             Self::None => (Taylor::constant(0.0), Taylor::constant(0.0)),
             Self::Parabolas { m, p } => {
@@ -67,16 +45,17 @@ impl Camber {
                 } else {
                     (m / ((1.0 - p) * (1.0 - p)), 1.0 - 2.0 * p)
                 };
-                let ordinate = x.polynomial(&[start, 2.0 * p, -1.0]) * scale;
-                (ordinate, x.polynomial(&[2.0 * p, -2.0]) * scale)
+                let ordinate = x.polynomial(&[start * scale, 2.0 * p * scale, -scale]);
+                (ordinate, x.polynomial(&[2.0 * p * scale, -2.0 * scale]))
             }
             Self::Cubic { m, k1, ratio } => {
                 // y_c = k1/6 [f (x - m)³ - (k2/k1)(1 - m)³ x - m³ x + m³], f = 1 ahead of m and k2/k1 behind
                 let f = if x.value() < m { 1.0 } else { ratio };
                 let linear = -ratio * (1.0 - m).powi(3) - m.powi(3);
                 let shifted = x - Taylor::constant(m);
-                let ordinate = shifted * shifted * shifted * f + x * linear + Taylor::constant(m.powi(3));
-                let slope = shifted * shifted * (3.0 * f) + Taylor::constant(linear);
+                let square = shifted * shifted;
+                let ordinate = square * shifted * f + x * linear + Taylor::constant(m.powi(3));
+                let slope = square * (3.0 * f) + Taylor::constant(linear);
                 (ordinate * (k1 / 6.0), slope * (k1 / 6.0))
             }
         }
@@ -84,7 +63,7 @@ impl Camber {
 
     /// Ordinate y/c and slope of the mean line at `x` \[-\].
     pub fn line(&self, x: f64) -> (f64, f64) {
-        let (ordinate, slope) = self.at(Taylor::constant(x));
+        let (ordinate, slope) = self.at(Taylor::<1>::constant(x));
         (ordinate.value(), slope.value())
     }
 
@@ -94,6 +73,32 @@ impl Camber {
             Self::None => None,
             Self::Parabolas { p, .. } => Some(p),
             Self::Cubic { m, .. } => Some(m),
+        }
+    }
+
+    /// Greatest ordinate in size, with its sign, and its place \[-\]; zero at the nose for a straight line.
+    pub fn greatest(&self) -> (f64, f64) {
+        match *self {
+            Self::None => (0.0, 0.0),
+            Self::Parabolas { m, p } => (m, p),
+            Self::Cubic { m, ratio, .. } => {
+                // ahead of m: 3 (x - m)² = (k2/k1)(1 - m)³ + m³
+                let x = m - ((ratio * (1.0 - m).powi(3) + m.powi(3)) / 3.0).sqrt();
+                (self.line(x).0, x)
+            }
+        }
+    }
+
+    /// The mean line with every ordinate multiplied by `factor`.
+    pub const fn scaled(self, factor: f64) -> Self {
+        match self {
+            Self::None => Self::None,
+            Self::Parabolas { m, p } => Self::Parabolas { m: m * factor, p },
+            Self::Cubic { m, k1, ratio } => Self::Cubic {
+                m,
+                k1: k1 * factor,
+                ratio,
+            },
         }
     }
 }
@@ -107,17 +112,43 @@ pub struct Formula {
     pub camber: Camber,
 }
 
+/// A formula with its coefficients worked out.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Shape {
+    thickness: Curve,
+    pub(super) camber: Camber,
+}
+
 impl Formula {
+    pub(super) fn shape(&self) -> Shape {
+        Shape {
+            thickness: self.thickness.curve(),
+            camber: self.camber,
+        }
+    }
+}
+
+impl Shape {
     /// Point of the upper (`side` = 1) or lower (-1) surface by `t` = √x of the mean line's station, as Taylor series.
-    pub(super) fn surface(&self, side: f64, t: f64) -> (Taylor, Taylor) {
+    pub(super) fn surface<const N: usize>(&self, side: f64, t: f64) -> (Taylor<N>, Taylor<N>) {
         let t = Taylor::variable(t);
         let x = t * t;
-        let half = self.thickness.at(t) * side;
-        let (ordinate, slope) = self.camber.at(x);
+        let half = self.thickness.at(t, x) * side;
         if self.camber == Camber::None {
             return (x, half);
         }
+        let (ordinate, slope) = self.camber.at(x);
         let cosine = (slope * slope + Taylor::constant(1.0)).inverse_sqrt();
-        (x - half * slope * cosine, ordinate + half * cosine)
+        let across = half * cosine;
+        (x - across * slope, ordinate + across)
+    }
+
+    /// Stations of the mean line where a derivative of the surface jumps \[-\], in order.
+    pub(super) fn breaks(&self) -> Vec<f64> {
+        let mut breaks: Vec<f64> = self.camber.break_at().into_iter().collect();
+        breaks.extend((self.thickness.place < 1.0).then_some(self.thickness.place));
+        breaks.sort_by(f64::total_cmp);
+        breaks.dedup_by(|a, b| (*a - *b).abs() < 1e-9);
+        breaks
     }
 }

@@ -3,7 +3,6 @@
 //! Nothing here knows how the wing was laid out: it sees faces only, and compares what it finds with numbers it is told.
 
 mod compare;
-mod quadrature;
 mod slice;
 mod solid;
 

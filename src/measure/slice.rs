@@ -2,9 +2,9 @@
 
 use nalgebra::{Point3, Vector3};
 
-use super::quadrature::ten;
 use crate::loft::Loft;
 use crate::spline::Surface;
+use crate::spline::quadrature::ten;
 
 /// A chord line found on the solid: from the edge between the skins at the nose to the middle of the trailing edge.
 #[derive(Clone, Copy, Debug, PartialEq)]

@@ -2,8 +2,8 @@
 
 use nalgebra::{Point3, Vector3};
 
-use super::quadrature::{four, ten};
 use crate::loft::Loft;
+use crate::spline::quadrature::{four, ten};
 use crate::spline::{Curve, Surface};
 
 /// Figures of a closed solid.

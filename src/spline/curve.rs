@@ -23,6 +23,14 @@ impl Function {
             .sum()
     }
 
+    /// `-f(-t)`: turned half around the origin.
+    pub fn mirrored(&self) -> Self {
+        Self {
+            knots: self.knots.mirrored(),
+            coefficients: self.coefficients.iter().rev().map(|c| -c).collect(),
+        }
+    }
+
     /// Value, first and second derivative at `t`.
     pub fn derivatives(&self, t: f64) -> [f64; 3] {
         let d = self.knots.derivatives(t);

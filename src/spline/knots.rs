@@ -22,6 +22,50 @@ pub struct Derivatives {
     pub rows: [[f64; ORDER]; 3],
 }
 
+/// The basis functions that are not zero on one span.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct SpanBasis {
+    /// Index of the first of them.
+    pub(super) first: usize,
+    degree: usize,
+    /// The knots that they depend on: `degree` up to the span's start and `degree` from its end.
+    knots: [f64; 2 * MAX_DEGREE],
+    /// Reciprocal distances between knots, by level of the recursion.
+    inverse: [[f64; MAX_DEGREE]; MAX_DEGREE],
+}
+
+impl SpanBasis {
+    /// Whether a parameter is on the span.
+    pub(super) fn holds(&self, t: f64) -> bool {
+        t >= self.knots[self.degree - 1] && t < self.knots[self.degree]
+    }
+
+    /// Values at `t`.
+    pub(super) fn at(&self, t: f64) -> [f64; ORDER] {
+        if self.degree == MAX_DEGREE {
+            self.recur(MAX_DEGREE, t)
+        } else {
+            self.recur(self.degree, t)
+        }
+    }
+
+    #[inline(always)]
+    fn recur(&self, degree: usize, t: f64) -> [f64; ORDER] {
+        let mut values = [0.0; ORDER];
+        values[0] = 1.0;
+        for level in 1..=degree {
+            let mut saved = 0.0;
+            for i in 0..level {
+                let part = values[i] * self.inverse[level - 1][i];
+                values[i] = saved + (self.knots[degree + i] - t) * part;
+                saved = (t - self.knots[degree + i - level]) * part;
+            }
+            values[level] = saved;
+        }
+        values
+    }
+}
+
 impl Knots {
     /// A knot vector of `degree` (1 to 5) over \[`start`, `end`\] with simple or multiple `interior` knots in ascending order.
     ///
@@ -47,6 +91,14 @@ impl Knots {
     /// Where the degree is out of range.
     pub fn bezier(degree: usize) -> Self {
         Self::clamped(degree, 0.0, 1.0, &[]).expect("a degree from 1 to 5 is given")
+    }
+
+    /// The knots of `f(-t)`.
+    pub fn mirrored(&self) -> Self {
+        Self {
+            degree: self.degree,
+            values: self.values.iter().rev().map(|t| -t).collect(),
+        }
     }
 
     /// Polynomial degree.
@@ -92,6 +144,29 @@ impl Knots {
             self.raise(span, level, t, &mut values);
         }
         (span - self.degree, values)
+    }
+
+    /// The basis on one span, made ready for many parameters.
+    pub(super) fn on_span(&self, span: usize) -> SpanBasis {
+        let mut knots = [0.0; 2 * MAX_DEGREE];
+        let mut inverse = [[0.0; MAX_DEGREE]; MAX_DEGREE];
+        let first = span + 1 - self.degree;
+        for (k, knot) in knots.iter_mut().enumerate().take(2 * self.degree) {
+            *knot = self.values[first + k];
+        }
+        for level in 1..=self.degree {
+            for i in 0..level {
+                let right = self.values[span + i + 1];
+                let left = self.values[span + i + 1 - level];
+                inverse[level - 1][i] = 1.0 / (right - left);
+            }
+        }
+        SpanBasis {
+            first: span - self.degree,
+            degree: self.degree,
+            knots,
+            inverse,
+        }
     }
 
     /// One step of the recursion: basis of degree `level - 1` to degree `level`, in place.
@@ -219,6 +294,22 @@ mod tests {
             assert!((value(0) - (1.0 - 2.0 * t + 3.0 * t * t - t.powi(4) + 0.5 * t.powi(5))).abs() < 1e-13);
             assert!((value(1) - (-2.0 + 6.0 * t - 4.0 * t.powi(3) + 2.5 * t.powi(4))).abs() < 1e-12);
             assert!((value(2) - (6.0 - 12.0 * t * t + 10.0 * t.powi(3))).abs() < 1e-10);
+        }
+    }
+
+    #[test]
+    fn the_basis_made_ready_for_a_span_is_the_basis() {
+        for degree in 1..=5 {
+            let knots = Knots::clamped(degree, 0.0, 1.0, &[0.1, 0.3, 0.55, 0.8]).unwrap();
+            for i in 0..200 {
+                let t = f64::from(i) / 200.0;
+                let (first, basis) = knots.basis(t);
+                let ready = knots.on_span(knots.span(t));
+                assert!(ready.holds(t) && ready.first == first);
+                for (a, b) in ready.at(t).iter().zip(&basis) {
+                    assert!((a - b).abs() < 1e-14);
+                }
+            }
         }
     }
 

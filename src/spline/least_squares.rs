@@ -1,7 +1,6 @@
 //! Weighted least squares for spline functions with some coefficients given.
 
-use nalgebra::{DMatrix, DVector};
-
+use super::banded::Banded;
 use super::curve::Function;
 use super::knots::{Knots, MAX_DEGREE};
 
@@ -29,7 +28,7 @@ pub struct LeastSquares {
     rows: Vec<Row>,
     fixed_start: usize,
     free: usize,
-    factor: Option<nalgebra::Cholesky<f64, nalgebra::Dyn>>,
+    factor: Banded,
 }
 
 impl LeastSquares {
@@ -41,41 +40,38 @@ impl LeastSquares {
         fixed_start: usize,
         fixed_end: usize,
     ) -> Option<Self> {
-        let rows: Vec<_> = parameters
-            .map(|(t, weight)| {
-                let (first, basis) = knots.basis(t);
-                Row { first, basis, weight }
-            })
-            .collect();
         let free = knots.count().checked_sub(fixed_start + fixed_end)?;
         let width = knots.degree() + 1;
-        let mut normal = DMatrix::<f64>::zeros(free, free);
-        for Row { first, basis, weight } in &rows {
+        // the products of all coefficients, the given ones included, row i holding those with i to i + degree
+        let mut products = vec![[0.0; MAX_DEGREE + 1]; knots.count()];
+        let mut rows = Vec::with_capacity(parameters.size_hint().0);
+        let mut span = knots.on_span(knots.degree());
+        for (t, weight) in parameters {
+            if !span.holds(t) {
+                span = knots.on_span(knots.span(t));
+            }
+            let (first, basis) = (span.first, span.at(t));
             let square = weight * weight;
             for i in 0..width {
-                let Some(a) = (first + i).checked_sub(fixed_start).filter(|a| *a < free) else {
-                    continue;
-                };
-                for j in 0..=i {
-                    let Some(b) = (first + j).checked_sub(fixed_start) else {
-                        continue;
-                    };
-                    normal[(a, b)] += square * basis[i] * basis[j];
+                let scaled = square * basis[i];
+                for (product, other) in products[first + i].iter_mut().zip(&basis[i..width]) {
+                    *product += scaled * other;
                 }
             }
+            rows.push(Row { first, basis, weight });
         }
+        let mut normal = products[fixed_start..fixed_start + free].to_vec();
         // a trace of the identity keeps a coefficient that no sample reaches from making the system singular
-        let scale = (0..free).map(|i| normal[(i, i)]).fold(0.0, f64::max);
-        for i in 0..free {
-            normal[(i, i)] += scale * 1e-14;
+        let trace = 1e-14 * normal.iter().map(|row| row[0]).fold(0.0, f64::max);
+        for row in &mut normal {
+            row[0] += trace;
         }
-        let factor = if free == 0 { None } else { Some(normal.cholesky()?) };
         Some(Self {
             knots: knots.clone(),
             rows,
             fixed_start,
             free,
-            factor,
+            factor: Banded::factorised(normal)?,
         })
     }
 
@@ -86,37 +82,27 @@ impl LeastSquares {
         coefficients[..start.len()].copy_from_slice(start);
         let tail = coefficients.len() - end.len();
         coefficients[tail..].copy_from_slice(end);
-        if let Some(factor) = &self.factor {
-            let mut right = DVector::<f64>::zeros(self.free);
-            for (Row { first, basis, weight }, value) in self.rows.iter().zip(values) {
-                let given: f64 = (0..width).map(|i| basis[i] * coefficients[first + i]).sum();
-                let rest = (value - given) * weight * weight;
-                for i in 0..width {
-                    if let Some(a) = (first + i)
-                        .checked_sub(self.fixed_start)
-                        .filter(|a| *a < self.free)
-                    {
-                        right[a] += basis[i] * rest;
-                    }
-                }
-            }
-            factor.solve_mut(&mut right);
-            for (i, value) in right.iter().enumerate() {
-                coefficients[self.fixed_start + i] = *value;
+        let mut right = vec![0.0; coefficients.len()];
+        for (Row { first, basis, weight }, value) in self.rows.iter().zip(values) {
+            let given: f64 = (0..width).map(|i| basis[i] * coefficients[first + i]).sum();
+            let rest = (value - given) * weight * weight;
+            for i in 0..width {
+                right[first + i] += basis[i] * rest;
             }
         }
+        let free = self.fixed_start..self.fixed_start + self.free;
+        self.factor.solve(&mut right[free.clone()]);
+        coefficients[free.clone()].copy_from_slice(&right[free]);
+        let deviations = (self.rows.iter().zip(values))
+            .map(|(Row { first, basis, weight }, value)| {
+                let fitted: f64 = (0..width).map(|i| basis[i] * coefficients[first + i]).sum();
+                (fitted - value) * weight
+            })
+            .collect();
         let function = Function {
             knots: self.knots.clone(),
             coefficients,
         };
-        let deviations = (self.rows.iter().zip(values))
-            .map(|(Row { first, basis, weight }, value)| {
-                let fitted: f64 = (0..width)
-                    .map(|i| basis[i] * function.coefficients[first + i])
-                    .sum();
-                (fitted - value) * weight
-            })
-            .collect();
         Fit { function, deviations }
     }
 }

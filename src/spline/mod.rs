@@ -2,10 +2,12 @@
 //!
 //! Everything here is non-rational, clamped, and of degree 5 at most.
 
+mod banded;
 mod curve;
 mod interpolate;
 mod knots;
 mod least_squares;
+pub mod quadrature;
 mod surface;
 
 pub use curve::{Curve, Function};

@@ -2,7 +2,7 @@
 
 use std::io;
 
-use crate::airfoil::{self, Section, coordinates};
+use crate::airfoil::{self, Closing, Section, coordinates};
 use crate::spec::{self, AirfoilSource, Fault, Source, Spec, sort_faults};
 
 /// A spec with its sections, ready to be built.
@@ -82,7 +82,9 @@ fn load(
     };
     if airfoil::is_designation(text) {
         let mut formula = airfoil::parse(text).map_err(|unknown| fault(unknown.reason, unknown.remedy))?;
-        formula.thickness.closed = sharp;
+        if sharp {
+            formula.thickness.closing = Closing::Coefficient;
+        }
         return Section::from_formula(text, formula).map_err(|e| fault(e.to_string(), String::new()));
     }
     let bytes = open(text).map_err(|e| {

@@ -1,6 +1,9 @@
 //! Writers: a value in, bytes out. They know no flags, paths, terminals or clocks.
 
 pub mod record;
+mod section_svg;
 pub mod sheet;
 pub mod step;
 pub mod stl;
+
+pub use section_svg::{SectionDrawing, Tooth, section_svg};

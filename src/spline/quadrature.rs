@@ -1,4 +1,4 @@
-//! Gauss-Legendre rules.
+//! Gauss-Legendre rules for integrals over spline spans.
 
 /// Nodes and weights on \[-1, 1\], positive half, of the rule with 10 points; exact to degree 19.
 ///
@@ -28,12 +28,12 @@ fn on(half: &[(f64, f64)], from: f64, to: f64) -> impl Iterator<Item = (f64, f64
 }
 
 /// Ten (node, weight) pairs on an interval.
-pub(super) fn ten(from: f64, to: f64) -> impl Iterator<Item = (f64, f64)> {
+pub fn ten(from: f64, to: f64) -> impl Iterator<Item = (f64, f64)> {
     on(&TEN, from, to)
 }
 
 /// Four (node, weight) pairs on an interval.
-pub(super) fn four(from: f64, to: f64) -> impl Iterator<Item = (f64, f64)> {
+pub fn four(from: f64, to: f64) -> impl Iterator<Item = (f64, f64)> {
     on(&FOUR, from, to)
 }
 
