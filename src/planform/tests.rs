@@ -52,6 +52,7 @@ fn wing(root_chord: f64, panels: &[(f64, f64, f64)]) -> Spec {
         tip: TipForm::default(),
         trailing_edge_ratio: None,
         stated: Vec::new(),
+        notes: Vec::new(),
     }
 }
 

@@ -42,7 +42,9 @@ pub(super) enum Value {
     Number(f64),
     /// A text.
     Text(String),
-    /// A truth value or a date: nothing in a spec is one.
+    /// True or false.
+    Truth(bool),
+    /// A date: nothing in a spec is one.
     Other,
     /// An array.
     List(Vec<Node>),
@@ -142,7 +144,8 @@ impl Origin<'_> {
             DeValue::String(text) => Value::Text(text.to_string()),
             DeValue::Integer(integer) => Value::Number(number(integer.as_str(), integer.radix())),
             DeValue::Float(float) => Value::Number(float.as_str().parse().unwrap_or(f64::NAN)),
-            DeValue::Boolean(_) | DeValue::Datetime(_) => Value::Other,
+            DeValue::Boolean(truth) => Value::Truth(*truth),
+            DeValue::Datetime(_) => Value::Other,
             DeValue::Array(array) => {
                 let items = array.iter().enumerate();
                 Value::List(
@@ -273,7 +276,7 @@ fn typed(parts: &[&str], text: &str, place: Place) -> Node {
         [table, name] | [table, _, name] => keys::table(table).and_then(|table| keys::key(table, name)),
         _ => None,
     };
-    let wants_text = kind.is_some_and(|key| !matches!(key.kind, Kind::Number(..)));
+    let wants_text = kind.is_some_and(|key| matches!(key.kind, Kind::Text | Kind::Choice(_)));
     let bare = Value::Text(text.to_owned());
     let origin = Origin {
         text,

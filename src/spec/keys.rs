@@ -34,6 +34,12 @@ pub(super) enum Kind {
     Choice(&'static [&'static str]),
     /// A number of a dimension, in a range.
     Number(Dimension, Range),
+    /// A number of a dimension, in a range, or a word in its place.
+    NumberOr(Dimension, Range, &'static str),
+    /// Three lengths: a point.
+    Point(Range),
+    /// True or false.
+    Flag,
 }
 
 impl Key {
@@ -64,6 +70,38 @@ impl Key {
         }
     }
 
+    /// A number that the built wing is compared with, or a word in its place.
+    pub(super) const fn size_or(
+        name: &'static str,
+        dimension: Dimension,
+        range: Range,
+        word: &'static str,
+    ) -> Self {
+        Self {
+            name,
+            kind: Kind::NumberOr(dimension, range, word),
+            stated: true,
+        }
+    }
+
+    /// A point.
+    pub(super) const fn point(name: &'static str, range: Range) -> Self {
+        Self {
+            name,
+            kind: Kind::Point(range),
+            stated: false,
+        }
+    }
+
+    /// True or false.
+    pub(super) const fn flag(name: &'static str) -> Self {
+        Self {
+            name,
+            kind: Kind::Flag,
+            stated: false,
+        }
+    }
+
     /// Any other number.
     pub(super) const fn detail(name: &'static str, dimension: Dimension, range: Range) -> Self {
         Self {
@@ -74,7 +112,7 @@ impl Key {
     }
 }
 
-/// The values that a number may have, in mm, mm², rad or as a ratio.
+/// The values that a number may have, in mm, mm², rad, SI or as a ratio.
 #[derive(Clone, Copy, Debug)]
 pub(super) struct Range {
     low: f64,
@@ -124,6 +162,31 @@ impl Range {
         1e6,
         "0 (sharp), or a thickness of less than 10 % of the smallest chord",
     );
+    /// A trailing-edge thickness as a part of the chord.
+    pub(super) const PROPORTION: Self = Self {
+        high_allowed: false,
+        ..Self::above(0.0, 0.1, "more than 0, less than 10 %")
+    };
+    /// A place.
+    pub(super) const PLACE: Self = Self::closed(-1e6, 1e6, "-1000 m to 1000 m");
+    /// A mass.
+    pub(super) const MASS: Self = Self::above(0.0, 1e6, "more than 0, at most 1000000 kg");
+    /// A weight.
+    pub(super) const WEIGHT: Self = Self::above(0.0, 1e7, "more than 0, at most 10000 kN");
+    /// A wing loading.
+    pub(super) const LOADING: Self = Self::above(0.0, 1e6, "more than 0, at most 1000 kPa");
+    /// A speed.
+    pub(super) const SPEED: Self = Self::above(0.0, 1000.0, "more than 0, at most 1000 m/s");
+    /// A density: of any gas, or of water.
+    pub(super) const DENSITY: Self = Self::above(0.0, 2000.0, "more than 0, at most 2000 kg/m^3");
+    /// An altitude at which the standard atmosphere is known here \[mm\].
+    pub(super) const ALTITUDE: Self = Self::closed(
+        -5e6,
+        2e7,
+        "-5000 m to 20000 m (troposphere and lower stratosphere)",
+    );
+    /// A greatest lift coefficient.
+    pub(super) const LIFT: Self = Self::above(0.0, 10.0, "more than 0, at most 10");
     /// The largest distance between a facet and the surface.
     pub(super) const TOLERANCE: Self = Self::closed(0.0005, 10.0, "0.0005 mm to 10 mm");
 
@@ -194,17 +257,17 @@ pub(super) fn key<'a>(table: &'a Table, name: &str) -> Option<&'a Key> {
 /// `planform.taper_ratio` or `[planform]`; `None` where nothing is near.
 pub(super) fn nearest(within: &str, name: &str) -> Option<String> {
     let name = name.to_lowercase().replace(['-', ' '], "_");
-    let mut best = (NEAR, None);
-    let mut offer = |likeness: f64, text: String| {
-        if likeness > best.0 {
-            best = (likeness, Some(text));
+    let mut best = (0.0, None);
+    let mut offer = |likeness: f64, bonus: f64, text: String| {
+        if likeness > NEAR && likeness + bonus > best.0 {
+            best = (likeness + bonus, Some(text));
         }
     };
     for table in TABLES {
-        // a key of the same table wins over one of the same likeness elsewhere
-        let home = if table.name == within { 0.02 } else { 0.0 };
+        // a key of the same table wins over one elsewhere, even if that is a little more alike
+        let home = if table.name == within { 0.1 } else { 0.0 };
         for key in table.keys {
-            offer(likeness(&name, key.name) + home, path(table, key));
+            offer(likeness(&name, key.name), home, path(table, key));
         }
         if !table.name.is_empty() {
             let text = if table.many {
@@ -212,7 +275,7 @@ pub(super) fn nearest(within: &str, name: &str) -> Option<String> {
             } else {
                 format!("[{}]", table.name)
             };
-            offer(likeness(&name, table.name), text);
+            offer(likeness(&name, table.name), 0.0, text);
         }
     }
     best.1

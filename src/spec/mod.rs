@@ -3,16 +3,21 @@
 //! [`read`] takes the text and gives a [`Reading`]: the resolved [`Spec`], or every [`Fault`] of the file at once.
 //! All lengths here are millimetres, all angles radians (see the crate's conventions).
 
+mod atmosphere;
 mod choices;
 mod document;
 mod fault;
+mod flight;
+mod fuselage;
 mod keys;
+mod limit;
 mod panels;
 mod planform;
 mod quantity;
 mod reading;
 mod resolve;
 mod sizes;
+mod sizing;
 #[cfg(test)]
 mod tests;
 mod unit;
@@ -69,6 +74,8 @@ pub struct Spec {
     pub trailing_edge_ratio: Option<f64>,
     /// The sizes that the file states, for the proof sheet: each with the value typed.
     pub stated: Vec<Stated>,
+    /// What had to give way to what, and what it costs.
+    pub notes: Vec<String>,
 }
 
 /// One panel between two stations; one side.

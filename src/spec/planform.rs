@@ -3,9 +3,10 @@
 use super::Unit;
 use super::fault::{Fault, Place};
 use super::keys::{self, Kind};
+use super::limit::Limit;
 use super::panels::Outline;
 use super::quantity::{Dimension, Scale, all_of, one_of, significant};
-use super::sizes::{Contradiction, Missing, Relations, Settled, Size, Values, settle};
+use super::sizes::{Contradiction, Missing, ROUNDING, Relations, Settled, Size, Values, settle};
 use super::written::{Entry, Given, Planform};
 
 impl Planform {
@@ -30,6 +31,10 @@ pub(super) struct Question<'a> {
     pub(super) planform: &'a Planform,
     /// What the panels settle, where there are panels.
     pub(super) outline: Option<Outline>,
+    /// True for an ellipse.
+    pub(super) ellipse: bool,
+    /// Area that follows from `[load]`.
+    pub(super) sized: Option<&'a Given<f64>>,
     /// Unit for messages.
     pub(super) unit: Unit,
     /// Where a fault of the whole planform is put.
@@ -39,11 +44,13 @@ pub(super) struct Question<'a> {
 }
 
 impl Question<'_> {
-    /// The values of all sizes; the faults go to `faults`, and then there is no answer.
-    pub(super) fn answer(&self, faults: &mut Vec<Fault>) -> Option<Values> {
+    /// The values of all sizes, and what a limit of the span made of them; the faults go to `faults`, and then there is
+    /// no answer.
+    pub(super) fn answer(&self, faults: &mut Vec<Fault>) -> Option<(Values, Option<Limit>)> {
         let before = faults.len();
         let relations = match self.outline {
             Some(outline) => Relations::panels(outline.span, outline.constant, outline.slope),
+            None if self.ellipse => Relations::ellipse(),
             None => Relations::trapezoid(),
         };
         let mut given = Values::default();
@@ -56,6 +63,7 @@ impl Question<'_> {
             }
         }
         let settled = settle(&relations, &given);
+        faults.extend(self.two_areas());
         faults.extend(
             settled
                 .contradictions
@@ -73,19 +81,50 @@ impl Question<'_> {
         if settled.contradictions.is_empty() {
             faults.extend(self.out_of_range(&relations, &given, &settled));
         }
-        (faults.len() == before && !unreadable).then_some(settled.values)
+        if faults.len() > before || unreadable {
+            return None;
+        }
+        self.limited(&relations, &given, settled.values, faults)
     }
 
     /// The sizes that this planform may give.
     fn allowed(&self) -> impl Iterator<Item = Size> + use<'_> {
-        let panels = self.outline.is_some();
+        let free = self.outline.is_some() || self.ellipse;
         Size::ALL
             .into_iter()
-            .filter(move |size| !(panels && matches!(size, Size::TaperRatio | Size::TipChord)))
+            .filter(move |size| !(free && matches!(size, Size::TaperRatio | Size::TipChord)))
     }
 
     fn given(&self, size: Size) -> Option<&Given<f64>> {
-        self.planform.entry(size).given()
+        let sized = self.sized.filter(|_| size == Size::Area);
+        self.planform.entry(size).given().or(sized)
+    }
+
+    /// How a sentence names a size.
+    fn word(&self, size: Size) -> &'static str {
+        let typed = self.planform.entry(size).given();
+        match (size, typed, self.sized) {
+            (Size::Area, None, Some(_)) => "area from [load]",
+            _ => size.key(),
+        }
+    }
+
+    /// The fault of an area that `[load]` makes another.
+    fn two_areas(&self) -> Option<Fault> {
+        let (typed, sized) = (self.planform.area.given()?, self.sized?);
+        let difference = sized.value - typed.value;
+        (difference.abs() > ROUNDING * typed.value).then(|| {
+            let sign = if difference > 0.0 { "+" } else { "" };
+            let problem = format!(
+                "contradicts the area from [load], {} ({}; {sign}{}, {sign}{} %)",
+                self.show(Size::Area, sized.value),
+                sized.place.short(),
+                self.show(Size::Area, difference),
+                percent(difference / typed.value)
+            );
+            let remedy = "Delete the area, or what sizes it in [load].".to_owned();
+            self.fault(Some(Size::Area), problem, remedy)
+        })
     }
 
     fn scale(&self, size: Size) -> Scale {
@@ -98,7 +137,7 @@ impl Question<'_> {
             .map_or(dimension.bare(self.unit), |given| given.scale)
     }
 
-    fn show(&self, size: Size, value: f64) -> String {
+    pub(super) fn show(&self, size: Size, value: f64) -> String {
         self.scale(size).show(value)
     }
 
@@ -173,12 +212,12 @@ impl Question<'_> {
                 Some(given) => {
                     format!(
                         "{} = {} ({})",
-                        size.key(),
+                        self.word(size),
                         self.show(size, given.value),
                         given.place.short()
                     )
                 }
-                None => size.key().to_owned(),
+                None => self.word(size).to_owned(),
             })
             .collect();
         all_of(&names.iter().map(String::as_str).collect::<Vec<_>>())
@@ -209,7 +248,12 @@ impl Question<'_> {
     }
 
     /// Faults of sizes that follow from others and that no wing can have.
-    fn out_of_range(&self, relations: &Relations, given: &Values, settled: &Settled) -> Vec<Fault> {
+    pub(super) fn out_of_range(
+        &self,
+        relations: &Relations,
+        given: &Values,
+        settled: &Settled,
+    ) -> Vec<Fault> {
         let table = keys::table("planform").expect("planform is in the list");
         let mut faults = Vec::new();
         // a chord that is impossible says more than the ratio that it makes

@@ -1,4 +1,4 @@
-//! A number with its unit: from the text as typed to mm, mm², rad or a ratio, and back for messages.
+//! A number with its unit: from the text as typed to mm, mm², rad, SI or a ratio, and back for messages.
 
 use super::unit::Unit;
 
@@ -13,6 +13,16 @@ pub(super) enum Dimension {
     Angle,
     /// Ratio or fraction; bare, or in per cent.
     Ratio,
+    /// Mass; bare and inside in kg.
+    Mass,
+    /// Force; bare and inside in N.
+    Force,
+    /// Force per area; bare and inside in N/m². A mass per area counts as its weight under [`GRAVITY`].
+    Loading,
+    /// Speed; bare and inside in m/s.
+    Speed,
+    /// Density; bare and inside in kg/m³.
+    Density,
 }
 
 impl Dimension {
@@ -23,6 +33,11 @@ impl Dimension {
             Self::Area => "an area",
             Self::Angle => "an angle",
             Self::Ratio => "a ratio",
+            Self::Mass => "a mass",
+            Self::Force => "a force",
+            Self::Loading => "a wing loading",
+            Self::Speed => "a speed",
+            Self::Density => "a density",
         }
     }
 
@@ -33,6 +48,11 @@ impl Dimension {
             Self::Area => "\"0.33 m^2\"",
             Self::Angle => "\"3 deg\"",
             Self::Ratio => "0.4 or \"40 %\"",
+            Self::Mass => "\"6.2 kg\"",
+            Self::Force => "\"61 N\"",
+            Self::Loading => "\"84 N/m^2\"",
+            Self::Speed => "\"11 m/s\"",
+            Self::Density => "\"1.2 kg/m^3\"",
         }
     }
 
@@ -63,6 +83,11 @@ impl Dimension {
                 factor: DEGREE,
             },
             Self::Ratio => Scale::ONE,
+            Self::Mass => Scale::si("kg"),
+            Self::Force => Scale::si("N"),
+            Self::Loading => Scale::si("N/m^2"),
+            Self::Speed => Scale::si("m/s"),
+            Self::Density => Scale::si("kg/m^3"),
         }
     }
 }
@@ -72,7 +97,7 @@ impl Dimension {
 pub(super) struct Scale {
     /// Its symbol; empty for a bare ratio.
     pub(super) symbol: &'static str,
-    /// What one of it is in mm, mm², rad or as a ratio.
+    /// What one of it is in mm, mm², rad, SI or as a ratio.
     pub(super) factor: f64,
 }
 
@@ -82,6 +107,11 @@ impl Scale {
         symbol: "",
         factor: 1.0,
     };
+
+    /// An SI unit that values are kept in.
+    const fn si(symbol: &'static str) -> Self {
+        Self { symbol, factor: 1.0 }
+    }
 
     /// The value with its unit, to six significant digits.
     pub(super) fn show(self, value: f64) -> String {
@@ -132,8 +162,8 @@ impl QuantityError {
     }
 }
 
-/// Reads `text` as a quantity of `dimension`; a number without a unit is in `bare`. Gives the value in mm, mm², rad or
-/// as a ratio, and the unit it was typed in. The number may be infinite: the caller checks the range.
+/// Reads `text` as a quantity of `dimension`; a number without a unit is in `bare`. Gives the value in mm, mm², rad,
+/// SI or as a ratio, and the unit it was typed in. The number may be infinite: the caller checks the range.
 ///
 /// # Errors
 /// [`QuantityError`], if `text` is not a number with a unit of this dimension.
@@ -146,7 +176,7 @@ pub(super) fn parse(text: &str, dimension: Dimension, bare: Scale) -> Result<(f6
     if rest.starts_with(',') {
         return Err(QuantityError::Comma);
     }
-    let plain = rest.replace('²', "^2").replace(' ', "");
+    let plain = rest.replace('²', "^2").replace('³', "^3").replace(' ', "");
     match MEASURES.iter().find(|m| m.names.contains(&plain.as_str())) {
         Some(m) if m.dimension == dimension => {
             let scale = Scale {
@@ -213,13 +243,19 @@ pub(super) fn significant(value: f64) -> String {
 }
 
 struct Measure {
-    /// The symbol for messages, then other ways to type it; without spaces, `^2` for squares.
+    /// The symbol for messages, then other ways to type it; without spaces, `^2` for squares, `^3` for cubes.
     names: &'static [&'static str],
     dimension: Dimension,
     factor: f64,
 }
 
 const DEGREE: f64 = std::f64::consts::PI / 180.0;
+
+/// Standard acceleration of free fall \[m/s²\] (ISO 80000-3:2019, exact).
+pub(super) const GRAVITY: f64 = 9.806_65;
+/// The pound \[kg\] (international yard and pound agreement, 1959, exact).
+const POUND: f64 = 0.453_592_37;
+const FOOT: f64 = 0.3048;
 
 const fn square(unit: Unit) -> &'static str {
     match unit {
@@ -239,7 +275,8 @@ const fn measure(names: &'static [&'static str], dimension: Dimension, factor: f
     }
 }
 
-/// Every unit that may be typed. The inch is 25.4 mm and the foot 304.8 mm exactly.
+/// Every unit that may be typed. The inch is 25.4 mm, the foot 304.8 mm, the nautical mile 1852 m, the mile 1609.344 m
+/// exactly.
 const MEASURES: &[Measure] = &[
     measure(&["um", "µm", "μm"], Dimension::Length, 1e-3),
     measure(&["mm"], Dimension::Length, 1.0),
@@ -257,6 +294,41 @@ const MEASURES: &[Measure] = &[
     measure(&["deg", "°", "degree", "degrees"], Dimension::Angle, DEGREE),
     measure(&["rad"], Dimension::Angle, 1.0),
     measure(&["%"], Dimension::Ratio, 0.01),
+    measure(&["kg"], Dimension::Mass, 1.0),
+    measure(&["g"], Dimension::Mass, 1e-3),
+    measure(&["lb", "lbs"], Dimension::Mass, POUND),
+    measure(&["oz"], Dimension::Mass, POUND / 16.0),
+    measure(&["N"], Dimension::Force, 1.0),
+    measure(&["kN"], Dimension::Force, 1e3),
+    measure(&["lbf"], Dimension::Force, POUND * GRAVITY),
+    measure(&["N/m^2", "N/m2"], Dimension::Loading, 1.0),
+    measure(&["Pa"], Dimension::Loading, 1.0),
+    measure(&["kPa"], Dimension::Loading, 1e3),
+    measure(&["kg/m^2", "kg/m2"], Dimension::Loading, GRAVITY),
+    measure(&["g/dm^2", "g/dm2"], Dimension::Loading, 0.1 * GRAVITY),
+    measure(
+        &["lb/ft^2", "lb/ft2", "lbf/ft^2", "lbf/ft2", "psf"],
+        Dimension::Loading,
+        POUND * GRAVITY / (FOOT * FOOT),
+    ),
+    measure(
+        &["oz/ft^2", "oz/ft2"],
+        Dimension::Loading,
+        POUND / 16.0 * GRAVITY / (FOOT * FOOT),
+    ),
+    measure(&["m/s"], Dimension::Speed, 1.0),
+    measure(&["km/h"], Dimension::Speed, 1.0 / 3.6),
+    measure(&["kn", "kt", "kts"], Dimension::Speed, 1852.0 / 3600.0),
+    measure(&["mph"], Dimension::Speed, 0.447_04),
+    measure(&["ft/s"], Dimension::Speed, FOOT),
+    measure(&["kg/m^3", "kg/m3"], Dimension::Density, 1.0),
+    measure(&["g/cm^3", "g/cm3"], Dimension::Density, 1e3),
+    // a slug is the mass that a pound-force gives 1 ft/s²
+    measure(
+        &["slug/ft^3", "slug/ft3"],
+        Dimension::Density,
+        POUND * GRAVITY / (FOOT * FOOT * FOOT * FOOT),
+    ),
 ];
 
 #[cfg(test)]

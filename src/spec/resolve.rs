@@ -2,16 +2,17 @@
 
 use super::document::Node;
 use super::fault::{Fault, Place};
+use super::flight::{self, Needs};
+use super::fuselage;
+use super::limit::Limit;
 use super::panels::{self, ReferencePlane};
 use super::planform::Question;
 use super::quantity::significant;
 use super::sizes::Size;
+use super::sizing::Sizing;
 use super::unknown;
-use super::written::{Entry, Given, Line, Reader, Written};
-use super::{
-    AirfoilSource, ConstructionLine, IncidenceAt, Outline, Panel, Placing, Setting, Sides, Spec, SurfaceKind,
-    TipForm, TwistKind, TwistLaw,
-};
+use super::written::{Entry, Given, Line, Reader, Worded, Written};
+use super::{AirfoilSource, ConstructionLine, IncidenceAt, Outline, Panel, Setting, Sides, Spec};
 
 /// Largest thickness of the trailing edge, as a part of the smallest chord \[-\].
 const THICKEST_TRAILING_EDGE: f64 = 0.1;
@@ -66,6 +67,16 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
         faults.extend(panels::folds(&written.panels));
         faults.extend(two_tips(written));
     }
+    let ellipse = written.planform.outline.or_default() == Outline::Ellipse;
+    if ellipse {
+        faults.extend(no_ellipse(written));
+    }
+    let sizing = Sizing::of(
+        &written.load,
+        &place("load"),
+        unknown::hides_something(root, "load"),
+        faults,
+    );
     let outline = panels::outline(&written.panels);
     // panels of which a size is wrong settle nothing, and what is missing then cannot be told
     let sizes = if has_panels && outline.is_none() {
@@ -75,9 +86,13 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
         Question {
             planform: &written.planform,
             outline,
+            ellipse: ellipse && !has_panels,
+            sized: sizing.area.as_ref(),
             unit,
             place: place("planform"),
-            doubtful: unknown::hides_something(root, "planform"),
+            doubtful: unknown::hides_something(root, "planform")
+                || written.planform.outline.is_unreadable()
+                || sizing.doubtful,
         }
         .answer(faults)
     };
@@ -85,9 +100,11 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
         Some(panel) => &panel.dihedral,
         None => &written.planform.dihedral,
     };
+    let plane = ReferencePlane::of(first_dihedral.or(0.0));
     let sides = sides(written, first_dihedral, faults);
     let lines = lines(&written.lines, faults);
 
+    let (sizes, limit) = sizes.map_or((None, None), |(sizes, limit)| (Some(sizes), limit));
     let panels = sizes
         .as_ref()
         .zip(root_airfoil.as_ref())
@@ -104,15 +121,48 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
                 Some(vec![single(
                     written,
                     sizes.get(Size::Span)?,
-                    sizes.get(Size::TipChord)?,
+                    match sizes.get(Size::TipChord) {
+                        Some(chord) => chord,
+                        // an ellipse ends in a small real chord: what it has at 99 % of the semispan
+                        None => sizes.get(Size::RootChord)? * (1.0_f64 - 0.99 * 0.99).sqrt(),
+                    },
                     tip,
                 )])
             }
         });
     let root_chord = sizes.and_then(|sizes| sizes.get(Size::RootChord));
     faults.extend(thick_trailing_edge(written, root_chord, panels.as_deref()));
+    faults.extend(sharp_in_proportion(written));
+    let span = sizes.and_then(|sizes| sizes.get(Size::Span));
+    let body = fuselage::body(&written.body, span, plane, faults);
+    let outline = written.planform.outline.or_default();
+    let centre = root_chord
+        .zip(panels.as_deref())
+        .map(|(chord, panels)| fuselage::centre(chord, panels, outline));
+    let placing = fuselage::placing(&written.place, centre, faults);
+    let cruise_faults = faults.len();
+    let cruise = flight::cruise(&written.cruise, faults);
+    let load_doubtful = sizing.doubtful || sizes.is_none();
+    let load = sizes.and_then(|sizes| sizing.load(&sizes, limit.as_ref(), &written.planform));
+    faults.extend(
+        Needs {
+            setting: &written.setting,
+            written: &written.cruise,
+            cruise: cruise.as_ref(),
+            load: load.as_ref(),
+            load_doubtful,
+            cruise_doubtful: faults.len() > cruise_faults || unknown::hides_something(root, "cruise"),
+            plane,
+        }
+        .faults(),
+    );
 
-    let stated = std::mem::take(&mut reader.stated);
+    let mut stated = std::mem::take(&mut reader.stated);
+    if limit.is_some() {
+        // the limit put it aside
+        stated.retain(|stated| stated.key != "planform.aspect_ratio");
+    }
+    let incidence = written.setting.incidence.or(Worded::Number(0.0));
     (reader.faults.len() == before && before == 0).then_some(())?;
     Some(Spec {
         name,
@@ -121,26 +171,30 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
         root_airfoil: root_airfoil?,
         panels: panels?,
         setting: Setting {
-            incidence: written.setting.incidence.or(0.0),
+            incidence: match incidence {
+                Worded::Number(angle) => angle,
+                Worded::Word => 0.0,
+            },
             at: written.setting.at.or(IncidenceAt::Mac),
             twist_axis: written.setting.twist_axis.or(QUARTER),
-            twist_kind: TwistKind::default(),
-            twist_law: TwistLaw::default(),
-            for_cruise: false,
+            twist_kind: written.setting.twist_kind.or_default(),
+            twist_law: written.setting.twist_law.or_default(),
+            for_cruise: incidence == Worded::Word,
         },
         trailing_edge: written.trailing_edge.thickness.given().map(|given| given.value),
         facet_tolerance: written.facets.tolerance.or(FACET_TOLERANCE),
         sides,
         lines,
-        load: None,
-        cruise: None,
-        body: None,
-        placing: Placing::default(),
-        outline: Outline::default(),
-        surface: SurfaceKind::default(),
-        tip: TipForm::default(),
-        trailing_edge_ratio: None,
+        load,
+        cruise,
+        body,
+        placing,
+        outline,
+        surface: written.build.surface.or_default(),
+        tip: written.tip.form.or_default(),
+        trailing_edge_ratio: written.trailing_edge.proportion.given().map(|given| given.value),
         stated,
+        notes: limit.iter().map(Limit::note).collect(),
     })
 }
 
@@ -176,6 +230,44 @@ fn moved(written: &Written, faults: &mut Vec<Fault>) {
             ));
         }
     }
+}
+
+/// Faults of what an ellipse does not have.
+fn no_ellipse(written: &Written) -> Vec<Fault> {
+    let planform = &written.planform;
+    let chords = [&planform.tip_chord, &planform.taper_ratio].into_iter();
+    let mut faults: Vec<_> = chords
+        .filter_map(Entry::given)
+        .map(|given| {
+            at(
+                given,
+                "does not go with outline = \"ellipse\", of which the chord runs out at the tip".to_owned(),
+                "Delete the line: an ellipse is settled by two of area, span, aspect_ratio and root_chord."
+                    .to_owned(),
+            )
+        })
+        .collect();
+    if let (false, Some(outline)) = (written.panels.is_empty(), planform.outline.given()) {
+        faults.push(at(
+            outline,
+            "does not go with [[panel]]: panels are an outline of their own".to_owned(),
+            "Delete this line, or the panels.".to_owned(),
+        ));
+    }
+    faults
+}
+
+/// The fault of a sharp trailing edge that is to be in proportion to the chord as well.
+fn sharp_in_proportion(written: &Written) -> Option<Fault> {
+    let edge = &written.trailing_edge;
+    let sharp = edge.thickness.given().filter(|given| given.value == 0.0)?;
+    let proportion = edge.proportion.given()?;
+    let problem = format!(
+        "contradicts thickness = {} ({}), a sharp edge",
+        sharp.text,
+        sharp.place.short()
+    );
+    Some(at(proportion, problem, "Delete one of the two.".to_owned()))
 }
 
 /// The fault of a tip with two sections.

@@ -4,11 +4,14 @@
 //! S = b c_m        A = b / c_m        c_m = (c_r + c_t) / 2        λ = c_t / c_r
 //! S area, b span, A aspect ratio, c_m mean chord, c_r root chord, c_t tip chord, λ taper ratio
 //! ```
-//! With panels the last two give way to what the panels settle: the span, and c_m as a linear function of c_r.
+//! An ellipse has c_m = π/4 c_r in place of the last two, and neither taper ratio nor tip chord: its chord is
+//! c_r sqrt(1 - (2y/b)²). With panels the last two give way to what the panels settle: the span, and c_m as a linear function of c_r.
 //!
 //! Sizes that are given are taken up in the order of [`Size`]. One that already follows from those before it is
 //! compared with what follows, and is otherwise not used: so every size given differs from the resolved wing by at most
 //! [`ROUNDING`], or is part of a [`Contradiction`].
+
+use std::f64::consts::FRAC_PI_4;
 
 /// Relative difference up to which two values of the same size count as one that was rounded \[-\].
 pub(super) const ROUNDING: f64 = 5e-4;
@@ -109,6 +112,15 @@ impl Relations {
         relations.add(RootChord, &[MeanChord, TipChord], |v| 2.0 * v[0] - v[1]);
         relations.add(TipChord, &[MeanChord, RootChord], |v| 2.0 * v[0] - v[1]);
         relations.add(RootChord, &[MeanChord, TaperRatio], |v| 2.0 * v[0] / (1.0 + v[1]));
+        relations
+    }
+
+    /// An ellipse: its area is that of the full ellipse over both sides, S = π/4 b c_r.
+    pub(super) fn ellipse() -> Self {
+        use Size::{MeanChord, RootChord};
+        let mut relations = Self::rectangle();
+        relations.add(MeanChord, &[RootChord], |v| FRAC_PI_4 * v[0]);
+        relations.add(RootChord, &[MeanChord], |v| v[0] / FRAC_PI_4);
         relations
     }
 

@@ -149,20 +149,20 @@ fn values_of_the_wrong_kind() {
             "wing.toml:7: planform.sweep = \"1,5 deg\": a decimal comma is not understood",
         ),
         (
-            "outline = \"ellipse\"",
-            "wing.toml:7: planform.outline = \"ellipse\": not one of the words that this key knows\n  Write \"trapezoid\".",
+            "outline = \"oval\"",
+            "wing.toml:7: planform.outline = \"oval\": not one of the words that this key knows\n  Write \"trapezoid\" or \"ellipse\".",
         ),
         (
             "[setting]\nat = \"tip\"",
             "wing.toml:8: setting.at = \"tip\": not one of the words that this key knows\n  Write \"mac\" or \"root\".",
         ),
         (
-            "[setting]\nincidence = \"cruise\"",
-            "wing.toml:8: setting.incidence = \"cruise\": an angle is expected",
+            "[setting]\nincidence = \"cruising\"",
+            "wing.toml:8: setting.incidence = \"cruising\": an angle is expected, a number and its unit\n  Write it like \"3 deg\". Or write \"cruise\".",
         ),
         (
-            "[setting]\ntwist_kind = \"aerodynamic\"",
-            "wing.toml:8: setting.twist_kind = \"aerodynamic\": not one",
+            "[setting]\ntwist_kind = \"zero lift\"",
+            "wing.toml:8: setting.twist_kind = \"zero lift\": not one",
         ),
         (
             "[build]\nsurface = 3",

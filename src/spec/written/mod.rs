@@ -3,26 +3,38 @@
 //! To add a table: a file here with its `TABLE` and its type, an entry in [`TABLES`], a field in [`Written`].
 
 mod airfoil;
+mod body;
 mod build;
+mod cruise;
 mod facets;
 mod line;
+mod load;
 mod panel;
+mod place;
 mod planform;
 mod reader;
 mod setting;
+mod tip;
 mod top;
 mod trailing_edge;
+mod values;
 
 pub(super) use airfoil::Airfoil;
+pub(super) use body::Body;
 pub(super) use build::Build;
+pub(super) use cruise::Cruise;
 pub(super) use facets::Facets;
 pub(super) use line::Line;
+pub(super) use load::Load;
 pub(super) use panel::Panel;
+pub(super) use place::Place;
 pub(super) use planform::Planform;
 pub(super) use reader::{Entry, Given, Reader, Section};
 pub(super) use setting::Setting;
+pub(super) use tip::Tip;
 pub(super) use top::Top;
 pub(super) use trailing_edge::TrailingEdge;
+pub(super) use values::Worded;
 
 use super::document::Node;
 use super::keys::Table;
@@ -38,6 +50,11 @@ pub(super) const TABLES: &[&Table] = &[
     &facets::TABLE,
     &build::TABLE,
     &line::TABLE,
+    &load::TABLE,
+    &cruise::TABLE,
+    &body::TABLE,
+    &place::TABLE,
+    &tip::TABLE,
 ];
 
 /// What the file says.
@@ -61,6 +78,16 @@ pub(super) struct Written {
     pub(super) build: Build,
     /// Extra construction lines.
     pub(super) lines: Vec<Line>,
+    /// What the wing carries.
+    pub(super) load: Load,
+    /// Speed and air in cruise.
+    pub(super) cruise: Cruise,
+    /// The fuselage.
+    pub(super) body: Body,
+    /// Where the wing goes.
+    pub(super) place: Place,
+    /// How it ends.
+    pub(super) tip: Tip,
 }
 
 impl Written {
@@ -79,6 +106,11 @@ impl Written {
             facets: Facets::read(&mut reader.section(root, &facets::TABLE)),
             build: Build::read(&mut reader.section(root, &build::TABLE)),
             lines: reader.each(root, &line::TABLE, Line::read),
+            load: Load::read(&mut reader.section(root, &load::TABLE)),
+            cruise: Cruise::read(&mut reader.section(root, &cruise::TABLE)),
+            body: Body::read(&mut reader.section(root, &body::TABLE)),
+            place: Place::read(&mut reader.section(root, &place::TABLE)),
+            tip: Tip::read(&mut reader.section(root, &tip::TABLE)),
         }
     }
 }

@@ -1,6 +1,7 @@
 //! `[planform]`: any sufficient, consistent set of sizes, and the angles of a wing without panels.
 
 use super::{Entry, Section};
+use crate::spec::Outline;
 use crate::spec::keys::{Key, Range, Table};
 use crate::spec::quantity::Dimension::{Angle, Area, Length, Ratio};
 
@@ -18,7 +19,8 @@ pub(super) const TABLE: Table = Table {
         Key::size("sweep", Angle, Range::SWEEP),
         Key::detail("sweep_at", Ratio, Range::FRACTION),
         Key::size("dihedral", Angle, Range::DIHEDRAL),
-        Key::choice("outline", &["trapezoid"]),
+        Key::choice("outline", &["trapezoid", "ellipse"]),
+        Key::detail("span_limit", Length, Range::LENGTH),
     ],
 };
 
@@ -35,11 +37,12 @@ pub(in crate::spec) struct Planform {
     pub(in crate::spec) sweep: Entry<f64>,
     pub(in crate::spec) sweep_at: Entry<f64>,
     pub(in crate::spec) dihedral: Entry<f64>,
+    pub(in crate::spec) outline: Entry<Outline>,
+    pub(in crate::spec) span_limit: Entry<f64>,
 }
 
 impl Planform {
     pub(super) fn read(section: &mut Section<'_>) -> Self {
-        section.choice("outline", |_| Some(()));
         Self {
             area: section.number("area"),
             span: section.number("span"),
@@ -51,6 +54,12 @@ impl Planform {
             sweep: section.number("sweep"),
             sweep_at: section.number("sweep_at"),
             dihedral: section.number("dihedral"),
+            outline: section.choice("outline", |word| match word {
+                "trapezoid" => Some(Outline::Trapezoid),
+                "ellipse" => Some(Outline::Ellipse),
+                _ => None,
+            }),
+            span_limit: section.number("span_limit"),
         }
     }
 }

@@ -183,7 +183,9 @@ impl<'a> Section<'a> {
 
     /// As [`Section::number`], and a fault where the key is missing.
     pub(super) fn needed_number(&mut self, key: &str) -> Entry<f64> {
-        if self.is_there(key) {
+        if self.node.is_none() {
+            Entry::Absent
+        } else if self.is_there(key) {
             self.number(key)
         } else {
             Entry::Unreadable
@@ -202,7 +204,12 @@ impl<'a> Section<'a> {
     fn is_there(&mut self, key: &str) -> bool {
         let there = self.member(key).is_some();
         if !there {
-            let remedy = format!("Add {key} to this [[{}]].", self.table.name);
+            let name = self.table.name;
+            let remedy = if self.table.many {
+                format!("Add {key} to this [[{name}]].")
+            } else {
+                format!("Add {key} to [{name}].")
+            };
             self.reader.fault(self.node, format!("{key} is missing"), remedy);
         }
         there
@@ -218,13 +225,27 @@ impl<'a> Section<'a> {
             return Entry::Absent;
         };
         let entry = self.quantity(node, dimension, &range);
-        if let (true, Entry::Given(given)) = (known.stated, &entry) {
+        if known.stated {
+            self.state(&entry);
+        }
+        entry
+    }
+
+    /// Keeps a size for the comparison with the built wing.
+    pub(super) fn state(&mut self, entry: &Entry<f64>) {
+        if let Entry::Given(given) = entry {
             self.reader.stated.push(Stated {
-                key: node.place.key.clone(),
+                key: given.place.key.clone(),
                 value: given.value,
             });
         }
-        entry
+    }
+
+    /// Adds to what the last fault advises.
+    pub(super) fn advise(&mut self, more: &str) {
+        if let Some(fault) = self.reader.faults.last_mut() {
+            fault.remedy += more;
+        }
     }
 
     /// The text under a key: not empty, at most 10,000 characters, none of them a control character.
@@ -285,20 +306,20 @@ impl<'a> Section<'a> {
         )
     }
 
-    fn known(&self, key: &str) -> &'static keys::Key {
+    pub(super) fn known(&self, key: &str) -> &'static keys::Key {
         keys::key(self.table, key).expect("every key that is read is in its table's list")
     }
 
-    fn member(&self, key: &str) -> Option<&'a Node> {
+    pub(super) fn member(&self, key: &str) -> Option<&'a Node> {
         self.node.and_then(|node| node.member(key))
     }
 
-    fn wrong<T>(&mut self, node: &Node, problem: String, remedy: String) -> Entry<T> {
+    pub(super) fn wrong<T>(&mut self, node: &Node, problem: String, remedy: String) -> Entry<T> {
         self.reader.fault(Some(node), problem, remedy);
         Entry::Unreadable
     }
 
-    fn quantity(&mut self, node: &Node, dimension: Dimension, range: &Range) -> Entry<f64> {
+    pub(super) fn quantity(&mut self, node: &Node, dimension: Dimension, range: &Range) -> Entry<f64> {
         let bare = match (self.reader.unit, dimension) {
             // what a bare length means is not known, and the fault is the unit's
             (None, Dimension::Length | Dimension::Area) if matches!(node.value, Value::Number(_)) => {
@@ -337,7 +358,7 @@ impl<'a> Section<'a> {
     }
 }
 
-fn given<T>(node: &Node, value: T) -> Given<T> {
+pub(super) fn given<T>(node: &Node, value: T) -> Given<T> {
     Given {
         value,
         place: node.place.clone(),

@@ -2,24 +2,29 @@
 
 use super::{Entry, Section};
 use crate::spec::keys::{Key, Range, Table};
-use crate::spec::quantity::Dimension::Length;
+use crate::spec::quantity::Dimension::{Length, Ratio};
 
 pub(super) const TABLE: Table = Table {
     name: "trailing_edge",
     many: false,
-    keys: &[Key::detail("thickness", Length, Range::THICKNESS)],
+    keys: &[
+        Key::detail("thickness", Length, Range::THICKNESS),
+        Key::detail("proportion", Ratio, Range::PROPORTION),
+    ],
 };
 
 /// The table `[trailing_edge]`.
 #[derive(Debug)]
 pub(in crate::spec) struct TrailingEdge {
     pub(in crate::spec) thickness: Entry<f64>,
+    pub(in crate::spec) proportion: Entry<f64>,
 }
 
 impl TrailingEdge {
     pub(super) fn read(section: &mut Section<'_>) -> Self {
         Self {
             thickness: section.number("thickness"),
+            proportion: section.number("proportion"),
         }
     }
 }
