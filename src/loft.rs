@@ -8,7 +8,7 @@ use thiserror::Error;
 
 use crate::airfoil::{Profile, Profiles};
 use crate::planform::{Planform, SpanLaw, Station};
-use crate::spline::{Curve, Interpolation, Knots, Surface, part_from};
+use crate::spline::{Curve, Interpolation, Knots, Surface, WeightedSurface, part_from};
 
 /// Least trailing-edge thickness that is built where some station's is blunt \[mm\]: readers merge what is finer.
 pub const LEAST_BASE: f64 = 0.01;
@@ -50,8 +50,58 @@ pub struct Loft {
     pub blunt: bool,
     /// True for the port side.
     pub port: bool,
+    /// The round tip beyond the last section, where there is one.
+    pub round: Option<RoundTip>,
     /// Whether some sharp trailing edges were opened to [`LEAST_BASE`] because others are blunt.
     pub opened: bool,
+}
+
+/// A tip of half ellipses on the last section.
+///
+/// Upper and lower side are on the same knots then. For each pair of their control points U and L, with r = |U - L|/2 and
+/// the outward direction d, the control points are U, U + r d, (U + L)/2 + r d, L + r d, L with weights 1, √½, 1, √½, 1: at
+/// every chord station half an ellipse from the upper to the lower side.
+#[derive(Clone, Debug, PartialEq)]
+pub struct RoundTip {
+    /// The surface: u from the nose to the trailing edge, v from the upper side to the lower.
+    pub surface: WeightedSurface,
+    /// How far it stands out \[mm\].
+    pub reach: f64,
+}
+
+impl RoundTip {
+    fn on(section: &Section, knots: &Knots, outwards: &Vector3<f64>) -> Self {
+        let mut rows = vec![section.upper.clone()];
+        let radius = |i: usize| 0.5 * (section.upper[i] - section.lower[i]).norm();
+        let count = section.upper.len();
+        let out = |points: &dyn Fn(usize) -> Point3<f64>| (0..count).map(|i| points(i) + outwards * radius(i)).collect();
+        rows.push(out(&|i| section.upper[i]));
+        rows.push(out(&|i| nalgebra::center(&section.upper[i], &section.lower[i])));
+        rows.push(out(&|i| section.lower[i]));
+        rows.push(section.lower.clone());
+        let across = Knots::clamped(2, 0.0, 1.0, &[0.5, 0.5]).expect("a double knot in a parabola is allowed");
+        let half = std::f64::consts::FRAC_1_SQRT_2;
+        Self {
+            surface: WeightedSurface {
+                surface: Surface { u: knots.clone(), v: across, rows },
+                weights: vec![1.0, half, 1.0, half, 1.0],
+            },
+            reach: (0..count).map(radius).fold(0.0, f64::max),
+        }
+    }
+
+    /// The half ellipse at the trailing edge, from the upper edge of the base to the lower: control points.
+    pub fn rear(&self) -> Vec<Point3<f64>> {
+        self.surface.surface.column_curve(true).points
+    }
+
+    fn moved(&self, to: impl Fn(&Point3<f64>) -> Point3<f64>) -> Self {
+        let mut tip = self.clone();
+        for point in tip.surface.surface.rows.iter_mut().flatten() {
+            *point = to(point);
+        }
+        tip
+    }
 }
 
 /// The way from one section to the next.
@@ -174,6 +224,7 @@ impl Loft {
                 sections,
                 blunt,
                 port: false,
+                round: None,
                 opened,
             },
             SpanLaw::Smooth(spline, parameters) => {
@@ -191,6 +242,7 @@ impl Loft {
                     places: parameters.iter().map(|v| (0, *v)).collect(),
                     blunt,
                     port: false,
+                    round: None,
                     opened,
                 }
             }
@@ -258,11 +310,23 @@ impl Loft {
             })
             .collect();
         Self {
+            round: self.round.as_ref().map(|tip| tip.moved(&to)),
             sections: self.sections.iter().map(section).collect(),
             strips,
             port,
             ..self.clone()
         }
+    }
+
+    /// The same with a round tip, where upper and lower side are on the same knots (else unchanged).
+    pub fn with_round_tip(mut self, planform: &Planform) -> Self {
+        if self.upper_knots == self.lower_knots {
+            let up = planform.stations[planform.stations.len() - 1].up;
+            let outwards = up.cross(&Vector3::x());
+            let last = &self.sections[self.sections.len() - 1];
+            self.round = Some(RoundTip::on(last, &self.upper_knots, &outwards));
+        }
+        self
     }
 
     /// Number of panels.

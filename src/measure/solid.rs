@@ -2,7 +2,7 @@
 
 use nalgebra::{Point3, Vector3};
 
-use crate::loft::Loft;
+use crate::loft::{Loft, RoundTip};
 use crate::spline::quadrature::{four, ten};
 use crate::spline::{Curve, Surface};
 
@@ -50,10 +50,22 @@ pub fn figures(lofts: &[&Loft]) -> Figures {
                 sums.face(&base, origin, sense);
             }
         }
-        let tip = loft.panels();
-        sums.cap(&loft.upper_curve(tip), &loft.lower_curve(tip), origin, sense);
+        let last = loft.panels();
+        match &loft.round {
+            Some(tip) => sums.round_tip(tip, loft.blunt, origin, sense),
+            None => {
+                sums.cap(&loft.upper_curve(last), &loft.lower_curve(last), origin, sense);
+            }
+        }
         if !joined {
             root_area = sums.cap(&loft.upper_curve(0), &loft.lower_curve(0), origin, -sense);
+        }
+        if let Some(tip) = loft.round.as_ref().filter(|_| loft.blunt) {
+            for i in 0..=64_u32 {
+                let point = tip.surface.at(1.0, f64::from(i) / 64.0);
+                least = least.inf(&point);
+                greatest = greatest.sup(&point);
+            }
         }
         for k in 0..=loft.panels() {
             for curve in [loft.upper_curve(k), loft.lower_curve(k)] {
@@ -89,6 +101,35 @@ impl Sums {
                     for (t, weight_v) in &rule {
                         let d = surface.derivative(s, *t);
                         self.element(d.point - origin, d.u.cross(&d.v) * (sense * weight_u * weight_v));
+                    }
+                }
+            }
+        }
+    }
+
+    /// Adds a round tip, and the half disc behind it where the trailing edge is blunt.
+    fn round_tip(&mut self, tip: &RoundTip, blunt: bool, origin: Point3<f64>, sense: f64) {
+        let surface = &tip.surface;
+        for u in surface.surface.u.corners().windows(2) {
+            for v in surface.surface.v.corners().windows(2) {
+                for (s, weight_u) in ten(u[0], u[1]) {
+                    for (t, weight_v) in ten(v[0], v[1]) {
+                        let d = surface.derivative(s, t);
+                        self.element(d.point - origin, d.u.cross(&d.v) * (sense * weight_u * weight_v));
+                    }
+                }
+            }
+        }
+        if blunt {
+            // a fan from the middle of the base to the arc
+            let middle = nalgebra::center(&surface.at(1.0, 0.0), &surface.at(1.0, 1.0));
+            for v in surface.surface.v.corners().windows(2) {
+                for (t, weight_v) in ten(v[0], v[1]) {
+                    let d = surface.derivative(1.0, t);
+                    let spoke = d.point - middle;
+                    for (share, weight) in four(0.0, 1.0) {
+                        let area = spoke.cross(&(d.v * share)) * (-sense * weight * weight_v);
+                        self.element(middle + spoke * share - origin, area);
                     }
                 }
             }

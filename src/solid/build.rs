@@ -2,11 +2,11 @@
 
 use nalgebra::Point3;
 use truck_modeling as kernel;
-use truck_modeling::{BSplineCurve, BSplineSurface, Edge, Face, KnotVec, Plane, Shell, Vertex, Wire};
+use truck_modeling::{BSplineCurve, BSplineSurface, Edge, Face, KnotVec, NurbsCurve, NurbsSurface, Plane, Shell, Vertex, Wire};
 
 use super::{Error, FaceKind, FaceLabel, Side, Solid, check};
-use crate::loft::Loft;
-use crate::spline::{Curve, Surface};
+use crate::loft::{Loft, RoundTip};
+use crate::spline::{Curve, Surface, WeightedSurface};
 
 /// Builds one closed solid from a loft, or from two that meet in their root section (the first starboard, the second its
 /// mirror image).
@@ -33,7 +33,10 @@ pub fn build(name: &str, lofts: &[&Loft]) -> Result<Solid, Error> {
             shell.panel(loft, panel, &inner, &outer)?;
             inner = outer;
         }
-        shell.cap(loft, &inner, FaceKind::Tip)?;
+        match &loft.round {
+            Some(tip) => shell.round_tip(loft, &inner, tip)?,
+            None => shell.cap(loft, &inner, FaceKind::Tip)?,
+        }
     }
     let ShellInProgress { faces, labels } = shell;
     let shell: Shell = faces.into_iter().collect();
@@ -174,6 +177,30 @@ impl ShellInProgress {
         self.add(loft, kind, panel, around, kernel::Surface::Plane(plane), false)
     }
 
+    /// The round tip on the last section; on a blunt trailing edge also the half disc that closes it behind.
+    fn round_tip(&mut self, loft: &Loft, edges: &SectionEdges, tip: &RoundTip) -> Result<(), Error> {
+        let last = loft.panels() - 1;
+        let mut around: Vec<Edge> = vec![edges.upper.clone()];
+        if let Some(base) = &edges.base {
+            let arc = Edge::new(&edges.upper_tail, &edges.lower_tail, rear_arc(tip));
+            around.push(arc.clone());
+            let [upper, lower] = [edges.upper_tail.point(), edges.lower_tail.point()];
+            let middle = upper + (lower - upper) / 2.0;
+            let outwards = point(tip.rear()[2]) - middle;
+            // down, then outwards: behind on the starboard side, ahead on its mirror image
+            let (first, second) = if loft.port { (outwards, lower - upper) } else { (lower - upper, outwards) };
+            let plane = Plane::new(upper, upper + first, upper + second);
+            let mut disc: Wire = [base.clone(), arc.inverse()].into_iter().collect();
+            if loft.port {
+                disc = disc.inverse();
+            }
+            self.add(loft, FaceKind::TipEnd, last, disc, kernel::Surface::Plane(plane), false)?;
+        }
+        around.push(edges.lower.inverse());
+        let wire: Wire = around.into_iter().collect();
+        self.add(loft, FaceKind::Tip, last, wire, weighted(&tip.surface), loft.port)
+    }
+
     fn add(
         &mut self,
         loft: &Loft,
@@ -229,6 +256,26 @@ fn spanwise(a: &Vertex, b: &Vertex, along: &Curve) -> Edge {
     } else {
         Edge::new(a, b, curve(along))
     }
+}
+
+/// The half ellipse behind a round tip.
+fn rear_arc(tip: &RoundTip) -> kernel::Curve {
+    let knots = KnotVec::from(tip.surface.surface.v.values().to_vec());
+    let points = tip.rear().into_iter().zip(&tip.surface.weights).map(|(p, w)| homogeneous(&p, *w)).collect();
+    kernel::Curve::NurbsCurve(NurbsCurve::new(BSplineCurve::new_unchecked(knots, points)))
+}
+
+fn weighted(s: &WeightedSurface) -> kernel::Surface {
+    let (u, v) = (&s.surface.u, &s.surface.v);
+    let knots = (KnotVec::from(u.values().to_vec()), KnotVec::from(v.values().to_vec()));
+    let columns = (0..u.count())
+        .map(|i| s.surface.rows.iter().zip(&s.weights).map(|(row, w)| homogeneous(&row[i], *w)).collect())
+        .collect();
+    kernel::Surface::NurbsSurface(NurbsSurface::new(BSplineSurface::new_unchecked(knots, columns)))
+}
+
+fn homogeneous(p: &Point3<f64>, weight: f64) -> kernel::Vector4 {
+    kernel::Vector4::new(p.x * weight, p.y * weight, p.z * weight, weight)
 }
 
 fn curve(c: &Curve) -> kernel::Curve {

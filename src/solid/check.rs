@@ -4,7 +4,7 @@ use std::collections::HashMap;
 use std::fmt;
 
 use truck_modeling::{
-    BSplineSurface, BoundedCurve, Curve, EdgeID, InnerSpace, MetricSpace, ParametricCurve, Point3, Surface,
+    BSplineSurface, BoundedCurve, Curve, EdgeID, InnerSpace, MetricSpace, EuclideanSpace, ParametricCurve, Point3, Surface, Vector4,
     topology::ShellCondition,
 };
 
@@ -126,6 +126,10 @@ fn curve_ends(curve: &Curve) -> (Point3, Point3) {
 fn control_points(curve: &Curve) -> Vec<Point3> {
     match curve {
         Curve::BSplineCurve(spline) => spline.control_points().clone(),
+        Curve::NurbsCurve(arc) => {
+            let weighted = arc.control_points();
+            weighted.iter().map(|p| Point3::new(p.x / p.w, p.y / p.w, p.z / p.w)).collect()
+        }
         other => {
             let (start, end) = curve_ends(other);
             vec![start, end]
@@ -149,6 +153,26 @@ fn distance_to_surface(curve: &Curve, surface: &Surface) -> f64 {
             .into_iter()
             .map(|row| row_distance(&points, &row))
             .fold(f64::INFINITY, f64::min),
+        Surface::NurbsSurface(spline) => {
+            // a row that is an edge has to have the edge's points and weights
+            let points: Vec<Vector4> = match curve {
+                Curve::NurbsCurve(arc) => arc.control_points().clone(),
+                _ => points.iter().map(|p| p.to_vec().extend(1.0)).collect(),
+            };
+            let net = spline.control_points();
+            let rows = [
+                net[net.len() - 1].clone(),
+                net.iter().map(|row| row[0]).collect(),
+                net.iter().map(|row| row[row.len() - 1]).collect(),
+            ];
+            let distance = |row: &Vec<Vector4>| {
+                if row.len() != points.len() {
+                    return f64::INFINITY;
+                }
+                row.iter().zip(&points).map(|(a, b)| (a - b).magnitude()).fold(0.0, f64::max)
+            };
+            rows.iter().map(distance).fold(f64::INFINITY, f64::min)
+        }
         _ => f64::INFINITY,
     }
 }

@@ -24,8 +24,10 @@ pub enum FaceKind {
     TrailingEdge,
     /// Root cap.
     Root,
-    /// Tip cap.
+    /// Tip: a plane cap, or half ellipses.
     Tip,
+    /// Half disc behind a round tip on a blunt trailing edge.
+    TipEnd,
 }
 
 /// A side of the aircraft.

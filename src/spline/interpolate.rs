@@ -105,6 +105,27 @@ impl Interpolation {
     }
 }
 
+/// The same curve on more knots: control points for `knots` with `added` (inside the range, no knot more often than the
+/// degree) put in.
+pub fn refined(knots: &Knots, points: &[[f64; 2]], added: &[f64]) -> Vec<[f64; 2]> {
+    let p = knots.degree();
+    let (mut values, mut points) = (knots.values().to_vec(), points.to_vec());
+    for t in added {
+        // Boehm's knot insertion
+        let span = values.partition_point(|knot| knot <= t) - 1;
+        let mut next = Vec::with_capacity(points.len() + 1);
+        next.extend_from_slice(&points[..=span - p]);
+        for i in span - p + 1..=span {
+            let share = (t - values[i]) / (values[i + p] - values[i]);
+            next.push([0, 1].map(|k| points[i - 1][k] + (points[i][k] - points[i - 1][k]) * share));
+        }
+        next.extend_from_slice(&points[span..]);
+        values.insert(span + 1, *t);
+        points = next;
+    }
+    points
+}
+
 /// The part of a spline from `t` to its end: knots and control points.
 ///
 /// Returns `None` where `t` is not inside the range.

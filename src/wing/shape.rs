@@ -11,7 +11,7 @@ use crate::measure::{self, Check, Figures, Slices, Spanwise, compare};
 use crate::mesh::{self, Mesh};
 use crate::planform::{Planform, Reference, reference_geometry};
 use crate::solid::{self, Solid};
-use crate::spec::{Sides, Spec};
+use crate::spec::{Sides, Spec, TipForm};
 
 /// A wing, built and measured.
 #[derive(Clone, Debug)]
@@ -66,7 +66,12 @@ impl Wing {
             thickness: spec.trailing_edge,
             ratio: spec.trailing_edge_ratio,
         };
-        let at_origin = Loft::new(&planform, &profiles, chosen, edge)?;
+        let round = spec.tip == TipForm::Round;
+        let profiles = if round { profiles.on_common_knots() } else { profiles };
+        let mut at_origin = Loft::new(&planform, &profiles, chosen, edge)?;
+        if round {
+            at_origin = at_origin.with_round_tip(&planform);
+        }
         let starboard = at_origin.shifted(&planform.shift);
         let port = at_origin.mirrored().shifted(&planform.shift);
         let groups: Vec<(&str, Vec<&Loft>)> = match spec.sides {

@@ -64,6 +64,7 @@ pub(super) fn face_name(label: FaceLabel) -> String {
         FaceKind::TrailingEdge => "trailing edge",
         FaceKind::Root => "root",
         FaceKind::Tip => "tip",
+        FaceKind::TipEnd => "tip end",
     };
     let side = match label.side {
         Side::Starboard => "starboard",

@@ -53,7 +53,7 @@ pub(super) const fn face_colour(kind: FaceKind) -> [f64; 3] {
         FaceKind::Lower => [0.55, 0.63, 0.71],
         FaceKind::TrailingEdge => [0.93, 0.76, 0.38],
         FaceKind::Root => [0.36, 0.42, 0.50],
-        FaceKind::Tip => [0.45, 0.52, 0.60],
+        FaceKind::Tip | FaceKind::TipEnd => [0.45, 0.52, 0.60],
     }
 }
 
