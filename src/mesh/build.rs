@@ -5,6 +5,7 @@ use nalgebra::Point3;
 use super::Mesh;
 use super::caps::cap;
 use super::deviation::{Cell, Skin};
+use super::tip::{Side, round_tip};
 use super::spacing::{Bending, Grid};
 use crate::loft::Loft;
 
@@ -17,7 +18,7 @@ pub fn build(lofts: &[&Loft], tolerance: f64) -> Mesh {
     let mut aim = tolerance;
     loop {
         let grid = bending.grid(aim);
-        let mesh = on_grid(lofts, &grid);
+        let mesh = on_grid(lofts, &grid, aim);
         if mesh.deviation <= tolerance {
             return mesh;
         }
@@ -38,7 +39,7 @@ struct Builder<'a> {
     port: bool,
 }
 
-fn on_grid(lofts: &[&Loft], grid: &Grid) -> Mesh {
+fn on_grid(lofts: &[&Loft], grid: &Grid, tolerance: f64) -> Mesh {
     let mut builder = Builder {
         mesh: Mesh::default(),
         grid,
@@ -74,7 +75,14 @@ fn on_grid(lofts: &[&Loft], grid: &Grid) -> Mesh {
                 inner = outer;
             }
         }
-        builder.cap(&inner, true);
+        match &loft.round {
+            Some(tip) => {
+                let side = |corners| Side { parameters: &grid.chordwise, corners };
+                let (upper, lower) = (side(&inner.upper), side(&inner.lower));
+                round_tip(&mut builder.mesh, tip, upper, lower, loft.port, tolerance);
+            }
+            None => builder.cap(&inner, true),
+        }
     }
     builder.mesh
 }

@@ -8,6 +8,7 @@ mod caps;
 mod check;
 mod deviation;
 mod spacing;
+mod tip;
 
 pub use build::build;
 pub(crate) use check::single;
