@@ -48,7 +48,7 @@ impl CamberLine {
             coefficients: vec![0.0; knots.count()],
             knots,
         };
-        for _ in 0..10 {
+        for step in 0..30 {
             let rows: Vec<Condition> = stations
                 .iter()
                 .filter_map(|x| condition(section, &line, *x))
@@ -57,7 +57,11 @@ impl CamberLine {
                 break;
             };
             let moved = (next.iter().zip(&line.coefficients)).fold(0.0_f64, |m, (a, b)| m.max((a - b).abs()));
-            line.coefficients = next;
+            // half steps at first: from the chord line, the normals near a blunt nose can lead too far
+            let share = if step < 4 { 0.5 } else { 1.0 };
+            for (old, new) in line.coefficients.iter_mut().zip(next) {
+                *old += share * (new - *old);
+            }
             if moved < 1e-9 {
                 break;
             }
