@@ -54,6 +54,7 @@ impl<const N: usize> Taylor<N> {
     }
 
     /// `1 / sqrt(self)`, for a positive value.
+    #[expect(clippy::needless_range_loop, reason = "the index runs through several arrays")]
     pub(super) fn inverse_sqrt(self) -> Self {
         // y = a^(-1/2) satisfies 2 a y' + a' y = 0, solved order by order
         let a = self.0;
@@ -95,6 +96,7 @@ impl<const N: usize> Neg for Taylor<N> {
 
 impl<const N: usize> Mul for Taylor<N> {
     type Output = Self;
+    #[expect(clippy::needless_range_loop, reason = "the index runs through several arrays")]
     fn mul(self, other: Self) -> Self {
         let mut c = [0.0; N];
         for n in 0..N {

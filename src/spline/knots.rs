@@ -50,6 +50,7 @@ impl SpanBasis {
     }
 
     #[inline(always)]
+    #[expect(clippy::needless_range_loop, reason = "the index runs through several arrays")]
     fn recur(&self, degree: usize, t: f64) -> [f64; ORDER] {
         let mut values = [0.0; ORDER];
         values[0] = 1.0;
@@ -147,6 +148,7 @@ impl Knots {
     }
 
     /// The basis on one span, made ready for many parameters.
+    #[expect(clippy::needless_range_loop, reason = "the index runs through several arrays")]
     pub(super) fn on_span(&self, span: usize) -> SpanBasis {
         let mut knots = [0.0; 2 * MAX_DEGREE];
         let mut inverse = [[0.0; MAX_DEGREE]; MAX_DEGREE];
@@ -170,6 +172,7 @@ impl Knots {
     }
 
     /// One step of the recursion: basis of degree `level - 1` to degree `level`, in place.
+    #[expect(clippy::needless_range_loop, reason = "the index runs through several arrays")]
     fn raise(&self, span: usize, level: usize, t: f64, values: &mut [f64; ORDER]) {
         let mut saved = 0.0;
         for i in 0..level {

@@ -2,8 +2,6 @@
 //!
 //! Lines differ by dash and width, not by colour alone, so that the drawing is legible in black and white.
 
-use std::fmt::Write;
-
 /// What is drawn, in units of the chord with y up.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct SectionDrawing {
@@ -69,8 +67,7 @@ pub fn section_svg(drawing: &SectionDrawing) -> String {
     let height = foot + LINE * drawing.notes.len() as f64 + 0.5 * ROOM;
 
     let mut out = String::new();
-    let mut push =
-        |text: std::fmt::Arguments<'_>| out.write_fmt(text).expect("writing to a string cannot fail");
+    let mut push = |text: std::fmt::Arguments<'_>| out.push_str(&text.to_string());
     push(format_args!(
         "<svg xmlns=\"http://www.w3.org/2000/svg\" viewBox=\"0 0 {width:.1} {height:.1}\" width=\"{width:.0}\" height=\"{height:.0}\">\n"
     ));
@@ -132,7 +129,7 @@ fn path(points: &[[f64; 2]], closed: bool) -> String {
     let mut out = String::new();
     for (i, [x, y]) in points.iter().enumerate() {
         let command = if i == 0 { 'M' } else { 'L' };
-        write!(out, "{command}{x:.2} {y:.2}").expect("writing to a string cannot fail");
+        out.push_str(&format!("{command}{x:.2} {y:.2}"));
     }
     if closed && !points.is_empty() {
         out.push('Z');

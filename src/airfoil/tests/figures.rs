@@ -133,12 +133,6 @@ fn a_file_sampled_from_a_formula_has_the_figures_of_the_formula() {
         let contour = coordinates::read(file.as_bytes(), text).unwrap();
         let read = Section::from_contour(text, &contour).unwrap();
         let (known, found) = (exact.figures(), read.figures());
-        println!(
-            "{text}: {:.2e} of the points, area {:.1e}, zero lift {:.4}",
-            read.deviation,
-            found.area - known.area,
-            (found.zero_lift_angle - known.zero_lift_angle).to_degrees()
-        );
         near(text, found.area, known.area, 1e-5);
         near(text, found.perimeter, known.perimeter, 1e-5);
         near(text, found.thickness.value, known.thickness.value, 1e-5);

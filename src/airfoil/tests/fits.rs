@@ -32,12 +32,7 @@ fn fitted(sections: &[&Section]) -> Profiles {
 fn counts(text: &str) -> usize {
     let section = section(text);
     let profiles = fitted(&[&section]);
-    let count = profiles.upper.count().max(profiles.lower.count());
-    println!(
-        "{text}: {count} control points a side, {:.2e}",
-        profiles.deviation
-    );
-    count
+    profiles.upper.count().max(profiles.lower.count())
 }
 
 #[test]
@@ -67,11 +62,9 @@ fn any_section_takes_at_most_40() {
         "16-012", "0012-14", "9412-36",
     ] {
         let Ok(section) = Section::from_formula(text, parse(text).unwrap()) else {
-            println!("{text} crosses itself");
             continue;
         };
         let profiles = fitted(&[&section]);
-        println!("{text}: {} + {}", profiles.upper.count(), profiles.lower.count());
         assert!(profiles.upper.count().max(profiles.lower.count()) <= 40, "{text}");
     }
 }
@@ -80,7 +73,6 @@ fn any_section_takes_at_most_40() {
 fn sections_fitted_together_share_knots() {
     let sections = ["2415", "2412", "23012"].map(section);
     let profiles = fitted(&[&sections[0], &sections[1], &sections[2]]);
-    println!("{} + {}", profiles.upper.count(), profiles.lower.count());
     assert!(profiles.upper.count().max(profiles.lower.count()) <= 26);
     for profile in &profiles.profiles {
         assert_eq!(profile.upper.len(), profiles.upper.count());
@@ -123,7 +115,6 @@ fn a_corner_is_refused_with_its_place() {
         matches!(&error, Error::Corner { percent, .. } if (percent - 90.0).abs() < 1e-9),
         "{error}"
     );
-    println!("{error}");
 }
 
 #[test]
@@ -133,12 +124,6 @@ fn own_coordinate_files_are_fitted_closely() {
         let contour = coordinates::read(&std::fs::read(&path).unwrap(), "file").unwrap();
         let section = Section::from_contour("file", &contour).unwrap();
         let profiles = fitted(&[&section]);
-        println!(
-            "{path:?}: {:.2e}, {} + {}",
-            section.deviation,
-            profiles.upper.count(),
-            profiles.lower.count()
-        );
         assert!(section.deviation <= TOLERANCE);
         assert!(profiles.upper.count().max(profiles.lower.count()) <= 14);
     }

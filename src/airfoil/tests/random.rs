@@ -1,7 +1,7 @@
 //! Sections of random digits.
 
 use crate::airfoil::{Error, Section, TOLERANCE, coordinates, fit, is_designation, parse};
-use proptest::prelude::{Strategy, prop, prop_assert, proptest};
+use proptest::prelude::{ProptestConfig, Strategy, prop, prop_assert, proptest};
 
 fn four() -> impl Strategy<Value = String> {
     let camber = (1..=7_u32, 1..=7_u32).prop_map(|(m, p)| format!("{m}{p}"));
@@ -24,6 +24,8 @@ fn any() -> impl Strategy<Value = String> {
 }
 
 proptest! {
+    #![proptest_config(ProptestConfig::with_cases(64))]
+
     #[test]
     fn any_digits_are_fitted_or_refused_for_a_reason(text in any()) {
         prop_assert!(is_designation(&text));

@@ -54,11 +54,9 @@ fn a_rough_file_is_wavy_and_fairing_smooths_it_within_its_bound() {
     let contour = rough("2412", 8e-5);
     let as_given = Section::from_contour("rough", &contour);
     let faired = Section::faired("rough", &contour, 2e-4).unwrap();
-    println!("{:?}, moved {:.2e}", faired.waviness(), faired.deviation);
     assert!(faired.deviation <= 2e-4 && faired.deviation > 2e-5);
     assert_eq!(faired.waviness().excess(), 0);
     let waviness = as_given.unwrap().waviness();
-    println!("as given {waviness:?}");
     assert!(waviness.excess() > 40);
     let (a, b) = (faired.figures(), formula("2412").figures());
     assert!((a.area - b.area).abs() < 2e-4 && (a.zero_lift_angle - b.zero_lift_angle).abs() < 2e-3);
