@@ -11,7 +11,7 @@ use crate::measure::{self, Check, Figures, Slices, Spanwise, compare};
 use crate::mesh::{self, Mesh};
 use crate::planform::{Planform, Reference, reference_geometry};
 use crate::solid::{self, Solid};
-use crate::spec::{Sides, Spec, TipForm};
+use crate::spec::{Sides, Spec, TipForm, TwistKind};
 
 /// A wing, built and measured.
 #[derive(Clone, Debug)]
@@ -53,7 +53,7 @@ impl Wing {
             chosen,
             ..
         } = prepared;
-        let zero_lift = vec![0.0; spec.panels.len() + 1];
+        let zero_lift = zero_lift(prepared);
         let planform = Planform::of(spec, &zero_lift)?;
         let sections: Vec<&airfoil::Section> = sections.iter().collect();
         let profiles = airfoil::fit(&sections, airfoil::TOLERANCE)?;
@@ -144,4 +144,14 @@ fn facets(lofts: &[&Loft], tolerance: f64) -> Mesh {
     let mut mesh = mesh::build(&lofts, tolerance - off);
     mesh.deviation += off;
     mesh
+}
+
+/// Zero-lift angle of each of the spec's own stations \[rad\], by thin-aerofoil theory; zeros where nothing asks for it.
+fn zero_lift(prepared: &Prepared) -> Vec<f64> {
+    let setting = &prepared.spec.setting;
+    if setting.twist_kind == TwistKind::Geometric && !setting.for_cruise {
+        return vec![0.0; prepared.chosen.len()];
+    }
+    let angles: Vec<f64> = prepared.sections.iter().map(|section| section.figures().zero_lift_angle).collect();
+    prepared.chosen.iter().map(|k| angles[*k]).collect()
 }
