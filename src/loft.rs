@@ -74,16 +74,23 @@ impl RoundTip {
         let mut rows = vec![section.upper.clone()];
         let radius = |i: usize| 0.5 * (section.upper[i] - section.lower[i]).norm();
         let count = section.upper.len();
-        let out = |points: &dyn Fn(usize) -> Point3<f64>| (0..count).map(|i| points(i) + outwards * radius(i)).collect();
+        let out = |points: &dyn Fn(usize) -> Point3<f64>| {
+            (0..count).map(|i| points(i) + outwards * radius(i)).collect()
+        };
         rows.push(out(&|i| section.upper[i]));
         rows.push(out(&|i| nalgebra::center(&section.upper[i], &section.lower[i])));
         rows.push(out(&|i| section.lower[i]));
         rows.push(section.lower.clone());
-        let across = Knots::clamped(2, 0.0, 1.0, &[0.5, 0.5]).expect("a double knot in a parabola is allowed");
+        let across =
+            Knots::clamped(2, 0.0, 1.0, &[0.5, 0.5]).expect("a double knot in a parabola is allowed");
         let half = std::f64::consts::FRAC_1_SQRT_2;
         Self {
             surface: WeightedSurface {
-                surface: Surface { u: knots.clone(), v: across, rows },
+                surface: Surface {
+                    u: knots.clone(),
+                    v: across,
+                    rows,
+                },
                 weights: vec![1.0, half, 1.0, half, 1.0],
             },
             reach: (0..count).map(radius).fold(0.0, f64::max),

@@ -113,21 +113,42 @@ impl Profiles {
     /// which changes no shape.
     pub fn on_common_knots(&self) -> Self {
         let lacking = |own: &Knots, other: &Knots| -> Vec<f64> {
-            other.values().iter().copied().filter(|knot| !own.values().contains(knot)).collect()
+            other
+                .values()
+                .iter()
+                .copied()
+                .filter(|knot| !own.values().contains(knot))
+                .collect()
         };
-        let (for_upper, for_lower) = (lacking(&self.upper, &self.lower), lacking(&self.lower, &self.upper));
-        let mut all: Vec<f64> = self.upper.values().iter().copied().chain(for_upper.iter().copied()).collect();
+        let (for_upper, for_lower) = (
+            lacking(&self.upper, &self.lower),
+            lacking(&self.lower, &self.upper),
+        );
+        let mut all: Vec<f64> = self
+            .upper
+            .values()
+            .iter()
+            .copied()
+            .chain(for_upper.iter().copied())
+            .collect();
         all.sort_by(f64::total_cmp);
         let degree = self.upper.degree();
         let interior = &all[degree + 1..all.len() - degree - 1];
-        let Some(knots) = Knots::clamped(degree, 0.0, 1.0, interior) else { return self.clone() };
+        let Some(knots) = Knots::clamped(degree, 0.0, 1.0, interior) else {
+            return self.clone();
+        };
         let profiles = (self.profiles.iter())
             .map(|profile| Profile {
                 upper: refined(&self.upper, &profile.upper, &for_upper),
                 lower: refined(&self.lower, &profile.lower, &for_lower),
             })
             .collect();
-        Self { upper: knots.clone(), lower: knots, profiles, deviation: self.deviation }
+        Self {
+            upper: knots.clone(),
+            lower: knots,
+            profiles,
+            deviation: self.deviation,
+        }
     }
 }
 

@@ -2,7 +2,9 @@
 
 use nalgebra::Point3;
 use truck_modeling as kernel;
-use truck_modeling::{BSplineCurve, BSplineSurface, Edge, Face, KnotVec, NurbsCurve, NurbsSurface, Plane, Shell, Vertex, Wire};
+use truck_modeling::{
+    BSplineCurve, BSplineSurface, Edge, Face, KnotVec, NurbsCurve, NurbsSurface, Plane, Shell, Vertex, Wire,
+};
 
 use super::{Error, FaceKind, FaceLabel, Side, Solid, check};
 use crate::loft::{Loft, RoundTip};
@@ -188,13 +190,24 @@ impl ShellInProgress {
             let middle = upper + (lower - upper) / 2.0;
             let outwards = point(tip.rear()[2]) - middle;
             // down, then outwards: behind on the starboard side, ahead on its mirror image
-            let (first, second) = if loft.port { (outwards, lower - upper) } else { (lower - upper, outwards) };
+            let (first, second) = if loft.port {
+                (outwards, lower - upper)
+            } else {
+                (lower - upper, outwards)
+            };
             let plane = Plane::new(upper, upper + first, upper + second);
             let mut disc: Wire = [base.clone(), arc.inverse()].into_iter().collect();
             if loft.port {
                 disc = disc.inverse();
             }
-            self.add(loft, FaceKind::TipEnd, last, disc, kernel::Surface::Plane(plane), false)?;
+            self.add(
+                loft,
+                FaceKind::TipEnd,
+                last,
+                disc,
+                kernel::Surface::Plane(plane),
+                false,
+            )?;
         }
         around.push(edges.lower.inverse());
         let wire: Wire = around.into_iter().collect();
@@ -261,15 +274,30 @@ fn spanwise(a: &Vertex, b: &Vertex, along: &Curve) -> Edge {
 /// The half ellipse behind a round tip.
 fn rear_arc(tip: &RoundTip) -> kernel::Curve {
     let knots = KnotVec::from(tip.surface.surface.v.values().to_vec());
-    let points = tip.rear().into_iter().zip(&tip.surface.weights).map(|(p, w)| homogeneous(&p, *w)).collect();
+    let points = tip
+        .rear()
+        .into_iter()
+        .zip(&tip.surface.weights)
+        .map(|(p, w)| homogeneous(&p, *w))
+        .collect();
     kernel::Curve::NurbsCurve(NurbsCurve::new(BSplineCurve::new_unchecked(knots, points)))
 }
 
 fn weighted(s: &WeightedSurface) -> kernel::Surface {
     let (u, v) = (&s.surface.u, &s.surface.v);
-    let knots = (KnotVec::from(u.values().to_vec()), KnotVec::from(v.values().to_vec()));
+    let knots = (
+        KnotVec::from(u.values().to_vec()),
+        KnotVec::from(v.values().to_vec()),
+    );
     let columns = (0..u.count())
-        .map(|i| s.surface.rows.iter().zip(&s.weights).map(|(row, w)| homogeneous(&row[i], *w)).collect())
+        .map(|i| {
+            s.surface
+                .rows
+                .iter()
+                .zip(&s.weights)
+                .map(|(row, w)| homogeneous(&row[i], *w))
+                .collect()
+        })
         .collect();
     kernel::Surface::NurbsSurface(NurbsSurface::new(BSplineSurface::new_unchecked(knots, columns)))
 }

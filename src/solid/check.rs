@@ -4,8 +4,8 @@ use std::collections::HashMap;
 use std::fmt;
 
 use truck_modeling::{
-    BSplineSurface, BoundedCurve, Curve, EdgeID, InnerSpace, MetricSpace, EuclideanSpace, ParametricCurve, Point3, Surface, Vector4,
-    topology::ShellCondition,
+    BSplineSurface, BoundedCurve, Curve, EdgeID, EuclideanSpace, InnerSpace, MetricSpace, ParametricCurve,
+    Point3, Surface, Vector4, topology::ShellCondition,
 };
 
 use super::Solid;
@@ -128,7 +128,10 @@ fn control_points(curve: &Curve) -> Vec<Point3> {
         Curve::BSplineCurve(spline) => spline.control_points().clone(),
         Curve::NurbsCurve(arc) => {
             let weighted = arc.control_points();
-            weighted.iter().map(|p| Point3::new(p.x / p.w, p.y / p.w, p.z / p.w)).collect()
+            weighted
+                .iter()
+                .map(|p| Point3::new(p.x / p.w, p.y / p.w, p.z / p.w))
+                .collect()
         }
         other => {
             let (start, end) = curve_ends(other);
@@ -169,7 +172,10 @@ fn distance_to_surface(curve: &Curve, surface: &Surface) -> f64 {
                 if row.len() != points.len() {
                     return f64::INFINITY;
                 }
-                row.iter().zip(&points).map(|(a, b)| (a - b).magnitude()).fold(0.0, f64::max)
+                row.iter()
+                    .zip(&points)
+                    .map(|(a, b)| (a - b).magnitude())
+                    .fold(0.0, f64::max)
             };
             rows.iter().map(distance).fold(f64::INFINITY, f64::min)
         }

@@ -9,6 +9,7 @@ mod document;
 mod fault;
 mod flight;
 mod fuselage;
+mod identity;
 mod keys;
 mod limit;
 mod panels;
@@ -18,6 +19,7 @@ mod reading;
 mod resolve;
 mod sizes;
 mod sizing;
+mod step;
 #[cfg(test)]
 mod tests;
 mod unit;
@@ -31,6 +33,7 @@ pub use fault::{Fault, Place, sort_faults};
 pub use keys::keys;
 pub use panels::ReferencePlane;
 pub use reading::{Reading, Source, read, starter};
+pub use step::{StepForm, StepReference, StepSchema};
 pub use unit::Unit;
 
 /// A wing of which every number is known: what the file means, whatever way it was written.
@@ -38,6 +41,8 @@ pub use unit::Unit;
 pub struct Spec {
     /// The wing's name, as written.
     pub name: String,
+    /// What it is, in the words of the spec; `None` where it says nothing.
+    pub description: Option<String>,
     /// Unit of bare lengths in the spec and of every file written.
     pub unit: Unit,
     /// Root chord of the reference wing, on the centreline \[mm\].
@@ -54,6 +59,8 @@ pub struct Spec {
     pub facet_tolerance: f64,
     /// Which sides are built.
     pub sides: Sides,
+    /// How the STEP file is written.
+    pub step: StepForm,
     /// Extra construction lines.
     pub lines: Vec<ConstructionLine>,
     /// What the wing carries, where the file says so.

@@ -3,6 +3,7 @@
 use std::path::Path;
 
 use super::fault::{Fault, sort_faults};
+use super::identity::identity;
 use super::written::{Entry, Reader, Written};
 use super::{AirfoilSource, Spec, document, resolve, unknown};
 
@@ -26,6 +27,9 @@ pub struct Reading {
     pub faults: Vec<Fault>,
     /// Every airfoil text, also where there are faults, so that those of the airfoils can join them.
     pub airfoils: Vec<AirfoilSource>,
+    /// Every key with its value, one a line, `--set` values put in: equal for specs that say the same, however they are
+    /// laid out. Empty for a text that is not TOML.
+    pub identity: String,
 }
 
 /// Reads a spec. A text that is not TOML has one fault; otherwise all faults are found at once.
@@ -37,6 +41,7 @@ pub fn read(source: &Source<'_>) -> Reading {
                 spec: None,
                 faults: vec![*fault],
                 airfoils: Vec::new(),
+                identity: String::new(),
             };
         }
     };
@@ -59,6 +64,7 @@ pub fn read(source: &Source<'_>) -> Reading {
         spec,
         faults,
         airfoils: resolve::airfoils(&written),
+        identity: identity(&root),
     }
 }
 

@@ -12,7 +12,7 @@ use super::sizes::Size;
 use super::sizing::Sizing;
 use super::unknown;
 use super::written::{Entry, Given, Line, Reader, Worded, Written};
-use super::{AirfoilSource, ConstructionLine, IncidenceAt, Outline, Panel, Setting, Sides, Spec};
+use super::{AirfoilSource, ConstructionLine, IncidenceAt, Outline, Panel, Setting, Sides, Spec, StepForm};
 
 /// Largest thickness of the trailing edge, as a part of the smallest chord \[-\].
 const THICKEST_TRAILING_EDGE: f64 = 0.1;
@@ -166,6 +166,7 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
     (reader.faults.len() == before && before == 0).then_some(())?;
     Some(Spec {
         name,
+        description: written.top.description.given().map(|given| given.value.clone()),
         unit: written.top.unit.or_default(),
         root_chord: root_chord?,
         root_airfoil: root_airfoil?,
@@ -184,6 +185,10 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
         trailing_edge: written.trailing_edge.thickness.given().map(|given| given.value),
         facet_tolerance: written.facets.tolerance.or(FACET_TOLERANCE),
         sides,
+        step: StepForm {
+            reference: written.step.reference.or_default(),
+            schema: written.step.schema.or_default(),
+        },
         lines,
         load,
         cruise,

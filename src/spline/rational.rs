@@ -39,6 +39,10 @@ impl WeightedSurface {
             weight_rate += w * across.rows[1][j];
         }
         let point = point / weight;
-        Derivative { point: Point3::from(point), u: by_u / weight, v: (by_v - point * weight_rate) / weight }
+        Derivative {
+            point: Point3::from(point),
+            u: by_u / weight,
+            v: (by_v - point * weight_rate) / weight,
+        }
     }
 }

@@ -2,8 +2,12 @@
 
 use super::{Error, Wing};
 use crate::mesh::Mesh;
+use crate::spec::{StepReference, StepSchema};
 use crate::write::step::{Attribute, Document, Properties, ReferenceForm, Schema, Value};
 use crate::write::{step, stl};
+
+/// Description of the product in the STEP file where the spec has none.
+const DESCRIPTION: &str = "wing solid with its reference geometry, made by spanwise";
 
 /// A kind of file.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -58,10 +62,19 @@ impl Wing {
         let document = Document {
             id: options.id,
             name: &self.spec.name,
-            description: "wing solid with its reference geometry, made by spanwise",
+            description: self.spec.description.as_deref().unwrap_or(DESCRIPTION),
             unit: self.spec.unit,
-            schema: Schema::default(),
-            reference_form: ReferenceForm::default(),
+            schema: match self.spec.step.schema {
+                StepSchema::Ap242 => Schema::Ap242,
+                StepSchema::Ap214 => Schema::Ap214,
+            },
+            reference_form: match self.spec.step.reference {
+                StepReference::Both => ReferenceForm::Both,
+                StepReference::Construction => ReferenceForm::Construction,
+                StepReference::Wireframe => ReferenceForm::Wireframe,
+                StepReference::Parts => ReferenceForm::Parts,
+                StepReference::None => ReferenceForm::None,
+            },
             solids: &self.solids,
             properties: &properties,
             reference: &self.reference,
@@ -129,12 +142,33 @@ impl Wing {
             std::iter::once(&self.spec.root_airfoil).chain(self.spec.panels.iter().map(|p| &p.airfoil));
         let mut texts: Vec<&str> = airfoils.map(|airfoil| airfoil.text.as_str()).collect();
         texts.dedup();
-        let sections: String = texts
-            .join(", ")
-            .chars()
-            .map(|c| if c.is_ascii_graphic() || c == ' ' { c } else { '?' })
-            .collect();
-        attributes.push(attribute("sections from root to tip", Value::Text(sections)));
+        let sections = Value::Text(in_ascii(&texts.join(", ")));
+        attributes.push(attribute("sections from root to tip", sections));
+        attributes.push(attribute(
+            "spec hash, SHA-256",
+            Value::Text(self.spec_hash.clone()),
+        ));
         attributes
+    }
+}
+
+/// A text in printable ASCII, which is all that readers decode in an attribute: any other character as its code point,
+/// such as `<U+03B1>`.
+fn in_ascii(text: &str) -> String {
+    let put = |c: char| match c {
+        ' '..='~' => c.to_string(),
+        _ => format!("<U+{:04X}>", u32::from(c)),
+    };
+    text.chars().map(put).collect()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::in_ascii;
+
+    #[test]
+    fn text_in_attributes_is_ascii_and_nothing_is_lost() {
+        assert_eq!(in_ascii("it's a\\b, NACA 2412"), "it's a\\b, NACA 2412");
+        assert_eq!(in_ascii("flügel α\u{1F426}"), "fl<U+00FC>gel <U+03B1><U+1F426>");
     }
 }

@@ -2,6 +2,8 @@
 
 use std::io;
 
+use sha2::{Digest, Sha256};
+
 use crate::airfoil::{self, Closing, Section, coordinates};
 use crate::spec::{self, AirfoilSource, Fault, Source, Spec, sort_faults};
 
@@ -16,6 +18,8 @@ pub struct Prepared {
     pub chosen: Vec<usize>,
     /// What was found and done in coordinate files.
     pub notes: Vec<String>,
+    /// SHA-256 of the spec, `--set` values included, and of the coordinate files it names; hexadecimal.
+    pub hash: String,
 }
 
 /// Reads a spec and the sections it names. `open` reads a coordinate file, given its path as the spec has it.
@@ -37,13 +41,15 @@ pub fn prepare(
         .spec
         .as_ref()
         .is_some_and(|spec| spec.trailing_edge == Some(0.0));
+    let mut hash = Sha256::new();
+    hash_part(&mut hash, reading.identity.as_bytes());
     let (mut texts, mut sections, mut notes) = (Vec::<String>::new(), Vec::new(), Vec::new());
     for airfoil in &reading.airfoils {
         if texts.contains(&airfoil.text) {
             continue;
         }
         texts.push(airfoil.text.clone());
-        match load(airfoil, sharp, open, &mut notes) {
+        match load(airfoil, sharp, open, &mut notes, &mut hash) {
             Ok(section) => sections.push(section),
             Err(fault) => faults.push(*fault),
         }
@@ -62,7 +68,16 @@ pub fn prepare(
         sections,
         chosen,
         notes,
+        hash: (hash.finalize().iter())
+            .map(|byte| format!("{byte:02x}"))
+            .collect(),
     })
+}
+
+/// Adds one part, its length first, so that no two lists of parts are the same bytes.
+fn hash_part(hash: &mut Sha256, part: &[u8]) {
+    hash.update((part.len() as u64).to_le_bytes());
+    hash.update(part);
 }
 
 fn load(
@@ -70,6 +85,7 @@ fn load(
     sharp: bool,
     open: &dyn Fn(&str) -> io::Result<Vec<u8>>,
     notes: &mut Vec<String>,
+    hash: &mut Sha256,
 ) -> Result<Section, Box<Fault>> {
     let text = airfoil.text.as_str();
     let fault = |problem: String, remedy: String| {
@@ -93,6 +109,8 @@ fn load(
             "give a designation such as \"NACA 2412\", or the path of a coordinate file relative to the spec file".into(),
         )
     })?;
+    hash_part(hash, text.as_bytes());
+    hash_part(hash, &bytes);
     let contour = coordinates::read(&bytes, text).map_err(|e| {
         let place = if e.line() > 0 {
             format!(":{}", e.line())

@@ -36,6 +36,8 @@ pub struct Wing {
     pub meshes: Vec<Mesh>,
     /// Construction geometry.
     pub reference: Reference,
+    /// SHA-256 of the spec and the coordinate files it names, hexadecimal.
+    pub spec_hash: String,
     /// Cautions and guidance.
     pub notes: Vec<String>,
 }
@@ -67,7 +69,11 @@ impl Wing {
             ratio: spec.trailing_edge_ratio,
         };
         let round = spec.tip == TipForm::Round;
-        let profiles = if round { profiles.on_common_knots() } else { profiles };
+        let profiles = if round {
+            profiles.on_common_knots()
+        } else {
+            profiles
+        };
         let mut at_origin = Loft::new(&planform, &profiles, chosen, edge)?;
         if round {
             at_origin = at_origin.with_round_tip(&planform);
@@ -120,6 +126,7 @@ impl Wing {
             checks,
             meshes,
             reference,
+            spec_hash: prepared.hash.clone(),
             notes,
         })
     }

@@ -3,6 +3,7 @@
 mod accepted;
 mod contradictions;
 mod faults;
+mod identity;
 mod random;
 mod set;
 

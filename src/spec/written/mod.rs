@@ -14,6 +14,7 @@ mod place;
 mod planform;
 mod reader;
 mod setting;
+mod step;
 mod tip;
 mod top;
 mod trailing_edge;
@@ -31,6 +32,7 @@ pub(super) use place::Place;
 pub(super) use planform::Planform;
 pub(super) use reader::{Entry, Given, Reader, Section};
 pub(super) use setting::Setting;
+pub(super) use step::Step;
 pub(super) use tip::Tip;
 pub(super) use top::Top;
 pub(super) use trailing_edge::TrailingEdge;
@@ -49,6 +51,7 @@ pub(super) const TABLES: &[&Table] = &[
     &trailing_edge::TABLE,
     &facets::TABLE,
     &build::TABLE,
+    &step::TABLE,
     &line::TABLE,
     &load::TABLE,
     &cruise::TABLE,
@@ -76,6 +79,8 @@ pub(super) struct Written {
     pub(super) facets: Facets,
     /// What is built.
     pub(super) build: Build,
+    /// The STEP file.
+    pub(super) step: Step,
     /// Extra construction lines.
     pub(super) lines: Vec<Line>,
     /// What the wing carries.
@@ -105,6 +110,7 @@ impl Written {
             trailing_edge: TrailingEdge::read(&mut reader.section(root, &trailing_edge::TABLE)),
             facets: Facets::read(&mut reader.section(root, &facets::TABLE)),
             build: Build::read(&mut reader.section(root, &build::TABLE)),
+            step: Step::read(&mut reader.section(root, &step::TABLE)),
             lines: reader.each(root, &line::TABLE, Line::read),
             load: Load::read(&mut reader.section(root, &load::TABLE)),
             cruise: Cruise::read(&mut reader.section(root, &cruise::TABLE)),

@@ -1,4 +1,4 @@
-//! The keys above the first table: the wing's name and the unit of bare lengths.
+//! The keys above the first table: the wing's name and description, and the unit of bare lengths.
 
 use super::{Entry, Section};
 use crate::spec::Unit;
@@ -9,6 +9,7 @@ pub(super) const TABLE: Table = Table {
     many: false,
     keys: &[
         Key::text("name"),
+        Key::text("description"),
         Key::choice("unit", &["mm", "cm", "m", "in", "ft"]),
     ],
 };
@@ -17,6 +18,7 @@ pub(super) const TABLE: Table = Table {
 #[derive(Debug)]
 pub(in crate::spec) struct Top {
     pub(in crate::spec) name: Entry<String>,
+    pub(in crate::spec) description: Entry<String>,
     pub(in crate::spec) unit: Entry<Unit>,
 }
 
@@ -31,6 +33,7 @@ impl Top {
         ];
         Self {
             name: section.text("name"),
+            description: section.text("description"),
             unit: section.choice("unit", |word| {
                 units.into_iter().find(|unit| unit.symbol() == word)
             }),
