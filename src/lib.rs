@@ -34,6 +34,8 @@ pub mod measure;
 
 pub mod write;
 
+pub mod inspect;
+
 pub mod wing;
 
 pub mod cli;

@@ -6,9 +6,9 @@ use std::fs;
 use std::path::{Path, PathBuf};
 
 /// The modules, each of which may import from those before it.
-const ORDER: [&str; 13] = [
-    "spec", "spline", "airfoil", "planform", "loft", "solid", "mesh", "measure", "write", "wing", "family",
-    "cli", "main",
+const ORDER: [&str; 14] = [
+    "spec", "spline", "airfoil", "planform", "loft", "solid", "mesh", "measure", "write", "inspect", "wing",
+    "family", "cli", "main",
 ];
 
 /// Names of terminal, disk, clock and environment, which only `cli` and `main` may use.

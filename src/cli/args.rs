@@ -27,6 +27,16 @@ pub(super) enum Command {
     Begin,
     /// Build one wing: STEP, STL and figures, and a proof sheet of what was asked for beside what was measured
     Loft(LoftOptions),
+    /// Read files back: what is in them, measured from their own numbers beside what they state, and where they disagree
+    Inspect(InspectOptions),
+}
+
+/// Options of `inspect`.
+#[derive(Args, Debug)]
+pub(super) struct InspectOptions {
+    /// The files (STEP)
+    #[arg(required = true, value_name = "FILE")]
+    pub(super) files: Vec<PathBuf>,
 }
 
 /// Options of `loft`.

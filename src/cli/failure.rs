@@ -5,6 +5,7 @@ use std::path::PathBuf;
 
 use thiserror::Error;
 
+use crate::inspect;
 use crate::spec::Fault;
 use crate::wing;
 
@@ -37,6 +38,14 @@ pub(super) enum Failure {
         path: PathBuf,
         /// Why.
         source: wing::Error,
+    },
+    /// A file that cannot be read back.
+    #[error("{}: {source}", path.display())]
+    Inspect {
+        /// The file.
+        path: PathBuf,
+        /// Why.
+        source: inspect::Error,
     },
     /// A file that cannot be written.
     #[error("{}: cannot be written: {source}", path.display())]

@@ -3,6 +3,7 @@
 mod args;
 mod begin;
 mod failure;
+mod inspect;
 mod loft;
 mod output;
 mod stamp;
@@ -40,6 +41,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
     };
     let result = match &arguments.command {
         Command::Begin => begin::run(&output),
+        Command::Inspect(options) => inspect::run(options, &output),
         Command::Loft(options) => loft::run(options, &output),
     };
     match result {

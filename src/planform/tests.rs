@@ -1,7 +1,7 @@
 //! Known answers of the reference wing.
 
 use crate::spec::{
-    AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting, Sides, Spec, SurfaceKind, TipForm,
+    AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting, Sides, Spec, StepForm, SurfaceKind, TipForm,
     TwistKind, TwistLaw, Unit,
 };
 
@@ -27,6 +27,7 @@ fn wing(root_chord: f64, panels: &[(f64, f64, f64)]) -> Spec {
     });
     Spec {
         name: "test".into(),
+        description: None,
         unit: Unit::Millimetre,
         root_chord,
         root_airfoil: airfoil(),
@@ -42,6 +43,7 @@ fn wing(root_chord: f64, panels: &[(f64, f64, f64)]) -> Spec {
         trailing_edge: None,
         facet_tolerance: 0.05,
         sides: Sides::Both,
+        step: StepForm::default(),
         lines: Vec::new(),
         load: None,
         cruise: None,

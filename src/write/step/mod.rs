@@ -41,6 +41,15 @@ use reference::write_reference;
 use shape::write_solid;
 use units::Units;
 
+/// The published schema's entities that are written, with their supertypes: what a file is checked against.
+pub(crate) const SCHEMA: &str = include_str!("schema.txt");
+
+/// What headers name the schemas: AP242, AP214.
+pub(crate) const SCHEMAS: [&str; 2] = [
+    "AP242_MANAGED_MODEL_BASED_3D_ENGINEERING_MIM_LF { 1 0 10303 442 1 1 4 }",
+    "AUTOMOTIVE_DESIGN { 1 0 10303 214 1 1 1 1 }",
+];
+
 /// What a STEP file holds.
 #[derive(Clone, Copy, Debug)]
 pub struct Document<'a> {
@@ -210,8 +219,8 @@ fn begin<W: Write>(document: &Document<'_>, out: W) -> Result<Exchange<W>, Error
     let description: Vec<&str> = description.iter().map(String::as_str).collect();
     let name: String = document.name.chars().take(LONGEST).collect();
     let schema = [match document.schema {
-        Schema::Ap242 => "AP242_MANAGED_MODEL_BASED_3D_ENGINEERING_MIM_LF { 1 0 10303 442 1 1 4 }",
-        Schema::Ap214 => "AUTOMOTIVE_DESIGN { 1 0 10303 214 1 1 1 1 }",
+        Schema::Ap242 => SCHEMAS[0],
+        Schema::Ap214 => SCHEMAS[1],
     }];
     let program = env!("CARGO_PKG_NAME");
     let file_name: [&dyn Parameter; 7] = [

@@ -3,6 +3,7 @@
 use std::collections::{BTreeMap, BTreeSet};
 
 use super::reader::{File, Instance, Read};
+use crate::write::step::SCHEMA;
 
 /// An attribute's type.
 #[derive(Debug)]
@@ -39,9 +40,7 @@ pub(crate) struct Schema(BTreeMap<String, Entity>);
 impl Schema {
     /// The excerpt.
     pub(crate) fn excerpt() -> Self {
-        let lines = include_str!("schema.txt")
-            .lines()
-            .filter(|line| !line.starts_with('#'));
+        let lines = SCHEMA.lines().filter(|line| !line.starts_with('#'));
         Self(lines.map(entity).collect())
     }
 
