@@ -12,8 +12,11 @@ mod workdir; // a directory of its own for a run of the program
 mod bad_files; // missing, malformed and unwritable files, wrong usage: nothing is left behind
 mod bad_spec; // faults of a spec: what is said about them
 mod examples; // every example, as programs see it that know nothing of this one
+mod inspecting; // the command that reads files back: tables, JSON, exit codes
 mod known_answers; // closed forms and published wings
 mod layers; // each module imports only from those before it
 mod own_sections; // the coordinate files are what their headers say
 mod readme; // the README shows the program's real output
-mod same_bytes; // same input, same bytes
+mod same_bytes;
+mod step_edits; // single edits of a STEP file are found or harmless; what is no STEP file is refused
+mod step_forms; // every unit, side, schema and form of reference geometry, read by Open CASCADE and by inspect // same input, same bytes

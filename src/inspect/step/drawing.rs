@@ -71,6 +71,14 @@ pub(super) fn read(file: &Exchange<'_>, tolerance: f64, own: bool, faults: &mut 
         }
     }
     let drawn = drawn_points(file);
+    if own {
+        for id in drawn.iter().filter(|id| !layer_of.contains_key(id)) {
+            faults.push(Finding {
+                line: file.entry(*id).map(|entry| entry.line),
+                what: format!("#{id} CARTESIAN_POINT is drawn and on no layer"),
+            });
+        }
+    }
     for entry in file
         .all("CARTESIAN_POINT")
         .filter(|entry| drawn.contains(&entry.id))

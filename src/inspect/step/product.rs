@@ -110,63 +110,76 @@ pub(super) fn check(file: &Exchange<'_>, faults: &mut Vec<Finding>) {
     );
     check("GENERAL_PROPERTY_ASSOCIATION", "GENERAL_PROPERTY", 2, false);
     check("APPLICATION_PROTOCOL_DEFINITION", "APPLICATION_CONTEXT", 3, false);
+    let shapes = Shapes::read(file);
     for entry in file.all("PRODUCT_DEFINITION_SHAPE") {
-        if let Err(fault) = check_shape(file, entry) {
-            faults.push(fault);
-        }
+        faults.extend(shapes.check(file, entry).err());
     }
     for entry in file.all("CONTEXT_DEPENDENT_SHAPE_REPRESENTATION") {
-        if let Err(fault) = check_placed(file, entry) {
-            faults.push(fault);
+        faults.extend(shapes.check_placed(file, entry).err());
+    }
+}
+
+/// How shapes are represented; what can't be read is a fault elsewhere.
+struct Shapes {
+    /// For each shape, how many representations or places it has.
+    uses: HashMap<u64, usize>,
+    /// For each product definition, the representation of its shape.
+    representations: HashMap<u64, u64>,
+}
+
+impl Shapes {
+    fn read(file: &Exchange<'_>) -> Self {
+        let mut shapes = Self {
+            uses: HashMap::new(),
+            representations: HashMap::new(),
+        };
+        for entry in file.all("SHAPE_DEFINITION_REPRESENTATION") {
+            let found = args(file, entry, "SHAPE_DEFINITION_REPRESENTATION").and_then(|link| {
+                let shape = link.follow(file, 0, "PRODUCT_DEFINITION_SHAPE")?;
+                Ok((shape.id, shape.reference(2)?, link.reference(1)?))
+            });
+            if let Ok((shape, definition, representation)) = found {
+                *shapes.uses.entry(shape).or_default() += 1;
+                shapes.representations.insert(definition, representation);
+            }
+        }
+        for entry in file.all("CONTEXT_DEPENDENT_SHAPE_REPRESENTATION") {
+            let placed = args(file, entry, "CONTEXT_DEPENDENT_SHAPE_REPRESENTATION");
+            if let Ok(shape) = placed.and_then(|placed| placed.reference(1)) {
+                *shapes.uses.entry(shape).or_default() += 1;
+            }
+        }
+        shapes
+    }
+
+    /// A product's shape has a representation, an occurrence's a place.
+    fn check(&self, file: &Exchange<'_>, entry: Entry) -> Read<()> {
+        let shape = args(file, entry, "PRODUCT_DEFINITION_SHAPE")?;
+        match self.uses.get(&shape.id).copied().unwrap_or(0) {
+            1 => Ok(()),
+            n => {
+                let what = format!("#{}: a shape with {n} representations; one is expected", shape.id);
+                Err(finding(shape.line, what))
+            }
         }
     }
-}
 
-/// Representation of a product definition's shape.
-fn representation_of(file: &Exchange<'_>, definition: u64) -> Option<u64> {
-    file.all("SHAPE_DEFINITION_REPRESENTATION").find_map(|entry| {
-        let link = args(file, entry, "SHAPE_DEFINITION_REPRESENTATION").ok()?;
-        let shape = link.follow(file, 0, "PRODUCT_DEFINITION_SHAPE").ok()?;
-        (shape.reference(2) == Ok(definition)).then(|| link.reference(1).ok())?
-    })
-}
-
-/// A product's shape has a representation, an occurrence's a place.
-fn check_shape(file: &Exchange<'_>, entry: Entry) -> Read<()> {
-    let shape = args(file, entry, "PRODUCT_DEFINITION_SHAPE")?;
-    let of = shape.named(file, shape.reference(2)?)?;
-    let (keyword, i) = if file.kind_of(of).has("NEXT_ASSEMBLY_USAGE_OCCURRENCE") {
-        ("CONTEXT_DEPENDENT_SHAPE_REPRESENTATION", 1)
-    } else {
-        ("SHAPE_DEFINITION_REPRESENTATION", 0)
-    };
-    let uses = file
-        .all(keyword)
-        .filter(|entry| args(file, *entry, keyword).is_ok_and(|record| record.reference(i) == Ok(shape.id)));
-    match uses.count() {
-        1 => Ok(()),
-        n => Err(finding(
-            shape.line,
-            format!("#{}: a shape with {n} representations; one is expected", shape.id),
-        )),
+    /// An occurrence places the representation of its part in that of its whole, where it is drawn.
+    fn check_placed(&self, file: &Exchange<'_>, entry: Entry) -> Read<()> {
+        let placed = args(file, entry, "CONTEXT_DEPENDENT_SHAPE_REPRESENTATION")?;
+        let occurrence = placed.follow(file, 1, "PRODUCT_DEFINITION_SHAPE")?;
+        let occurrence = occurrence.follow(file, 2, "NEXT_ASSEMBLY_USAGE_OCCURRENCE")?;
+        let relation = placed.follow(file, 0, "REPRESENTATION_RELATIONSHIP")?;
+        let (whole, part) = (occurrence.reference(3)?, occurrence.reference(4)?);
+        let expected = [part, whole].map(|definition| self.representations.get(&definition).copied());
+        let found = [relation.reference(2)?, relation.reference(3)?];
+        if expected != found.map(Some) {
+            let what = format!(
+                "#{}: the part that is placed is not the one of its occurrence #{}",
+                placed.id, occurrence.id
+            );
+            return Err(finding(placed.line, what));
+        }
+        Ok(())
     }
-}
-
-/// An occurrence places the representation of its part in that of its whole, where it is drawn.
-fn check_placed(file: &Exchange<'_>, entry: Entry) -> Read<()> {
-    let placed = args(file, entry, "CONTEXT_DEPENDENT_SHAPE_REPRESENTATION")?;
-    let occurrence = placed.follow(file, 1, "PRODUCT_DEFINITION_SHAPE")?;
-    let occurrence = occurrence.follow(file, 2, "NEXT_ASSEMBLY_USAGE_OCCURRENCE")?;
-    let relation = placed.follow(file, 0, "REPRESENTATION_RELATIONSHIP")?;
-    let (whole, part) = (occurrence.reference(3)?, occurrence.reference(4)?);
-    let expected = [representation_of(file, part), representation_of(file, whole)];
-    let found = [relation.reference(2)?, relation.reference(3)?];
-    if expected != found.map(Some) {
-        let what = format!(
-            "#{}: the part that is placed is not the one of its occurrence #{}",
-            placed.id, occurrence.id
-        );
-        return Err(finding(placed.line, what));
-    }
-    Ok(())
 }
