@@ -4,81 +4,37 @@
 //! its mirror image, and [`Planform::shift`] says where the wing goes.
 
 mod chord;
+mod cruise;
+mod error;
 mod law;
+mod lift;
 mod lines;
 mod mac;
 mod reference;
 mod station;
 
 pub use chord::ChordLine;
+pub use cruise::{CruiseInput, CruiseResult, cruise_incidence};
+pub use error::Error;
 pub use law::SpanLaw;
+pub use lift::{Strip, THIN_SECTION, datcom, geometric_twist, helmbold, lifting_line, zero_lift_angle};
 pub use lines::reference_geometry;
 pub use mac::{MeanAerodynamicChord, ReferenceWing};
 pub use reference::{LineKind, Reference, ReferenceLine, ReferencePoint};
 pub use station::{Blend, Station};
 
 use nalgebra::Vector3;
-use thiserror::Error;
 
-use crate::spec::{IncidenceAt, Outline, Placing, ReferencePlane, Spec, SurfaceKind, TwistKind, TwistLaw};
+use crate::spec::{
+    Cruise, IncidenceAt, Outline, Placing, ReferencePlane, Spec, Step, SurfaceKind, TwistKind, TwistLaw,
+};
 use crate::spline::Ends;
 use mac::{Integrals, Shape};
 
+/// Strips between two stations, for the zero-lift angle of the wing.
+const STRIPS: u32 = 40;
 /// Largest difference from a twist that is linear in the span \[rad\]: 0.004°.
 const TWIST: f64 = 0.004 * std::f64::consts::PI / 180.0;
-/// Largest geometric twist that an aerodynamic one may need \[rad\]: 30°.
-const LARGEST_TWIST: f64 = 30.0 * std::f64::consts::PI / 180.0;
-
-/// What cannot be laid out.
-#[derive(Debug, Error, Clone, PartialEq)]
-#[non_exhaustive]
-pub enum Error {
-    /// An aerodynamic twist that needs an absurd geometric one.
-    #[error(
-        "setting.twist: between the zero-lift lines of these sections it needs a geometric twist of {needed:.1}° at the end of panel {panel}; allowed: -30 to 30°. Take a smaller twist, or sections whose zero-lift angles are closer"
-    )]
-    Twist {
-        /// Panel, counted from 1.
-        panel: usize,
-        /// Geometric twist that it needs \[deg\].
-        needed: f64,
-    },
-    /// A smooth surface through uneven stations swings out between them.
-    #[error(
-        "build.surface: the smooth surface swings out on panel {panel}: its chord there comes to {chord:.1} mm between stations of {inner:.1} and {outer:.1} mm. Take panels of more even length and taper, put a station between, or surface = \"ruled\""
-    )]
-    Overshoot {
-        /// Panel, counted from 1.
-        panel: usize,
-        /// Chord that it comes to \[mm\].
-        chord: f64,
-        /// Chord at its inner end \[mm\].
-        inner: f64,
-        /// Chord at its outer end \[mm\].
-        outer: f64,
-    },
-    /// The fuselage leaves too little wing.
-    #[error(
-        "body.width: the fuselage side is {side:.1} mm from the centreline, and the wing must reach at least {least:.1} mm beyond; its semispan is {semispan:.1} mm"
-    )]
-    Body {
-        /// Half the body's width \[mm\].
-        side: f64,
-        /// Least length beyond \[mm\].
-        least: f64,
-        /// Semispan \[mm\].
-        semispan: f64,
-    },
-    /// The fuselage side cuts a panel whose sections do not stand upright.
-    #[error(
-        "body.width: the fuselage side cuts panel {panel}, whose dihedral is beyond 30°; let the body end inside a flatter panel"
-    )]
-    SteepBody {
-        /// Panel, counted from 1.
-        panel: usize,
-    },
-}
-
 /// A wing laid out: where every section stands, and the reference wing's figures.
 #[derive(Clone, Debug)]
 pub struct Planform {
@@ -98,6 +54,10 @@ pub struct Planform {
     pub wing: ReferenceWing,
     /// Where the wing goes: this is added to everything in the end \[mm\].
     pub shift: Vector3<f64>,
+    /// Incidence asked for where the spec says, typed or found for cruise \[rad\].
+    pub incidence: f64,
+    /// How the incidence for cruise came about; empty where it was typed.
+    pub chain: Vec<Step>,
 }
 
 /// One panel of the reference wing.
@@ -176,6 +136,8 @@ impl Planform {
             fin,
             wing: ReferenceWing::default(),
             shift: Vector3::zeros(),
+            incidence: 0.0,
+            chain: Vec::new(),
         };
         let shape = match spec.outline {
             Outline::Trapezoid => Shape::Straight,
@@ -186,12 +148,20 @@ impl Planform {
         };
         let integrals = Integrals::of(&planform.stations, planform.fin, shape);
         let place = planform.place_of(integrals.offset());
-        planform.turn(spec.setting.incidence);
-        if spec.setting.at == IncidenceAt::Mac {
+        planform.incidence = spec.setting.incidence;
+        if let Some((load, cruise)) = spec.load.as_ref().zip(spec.cruise).filter(|_| spec.setting.for_cruise) {
+            let area = 2.0 * integrals.area;
+            let result = planform.for_cruise(load.weight, cruise, area, place, zero_lift)?;
+            planform.incidence = result.incidence;
+            planform.chain = result.chain;
+        }
+        let asked = planform.incidence;
+        planform.turn(asked);
+        if spec.setting.at == IncidenceAt::Mac || spec.setting.for_cruise {
             // the turn of the section between two stations is not linear in the root's: a few secant steps
-            let mut root = spec.setting.incidence;
+            let mut root = asked;
             for _ in 0..40 {
-                let missing = spec.setting.incidence - planform.chord(place).incidence();
+                let missing = asked - planform.chord(place).incidence();
                 root += missing;
                 planform.turn(root);
                 if missing.abs() < 1e-15 {
@@ -243,6 +213,52 @@ impl Planform {
         for station in &mut self.stations {
             station.incidence = root + station.twist;
         }
+    }
+
+    /// The incidence that carries a weight in cruise: see [`cruise_incidence`]. Strips and sweep are those of the stations.
+    fn for_cruise(
+        &self,
+        weight: f64,
+        cruise: Cruise,
+        area: f64,
+        place: f64,
+        zero_lift: &[f64],
+    ) -> Result<CruiseResult, Error> {
+        let section = |station: &Station| {
+            let Blend { inner, outer, share } = station.blend;
+            zero_lift[inner] + (zero_lift[outer] - zero_lift[inner]) * share
+        };
+        let at_mac = self.chord(place).incidence();
+        let (mut strips, mut sweep) = (Vec::new(), 0.0);
+        for (k, pair) in self.stations.windows(2).enumerate() {
+            let offsets = [k as f64, k as f64 + 1.0].map(|t| self.offset(t));
+            let middles = [&pair[0], &pair[1]].map(|station| station.nominal_leading_edge + 0.5 * station.chord);
+            let width = offsets[1] - offsets[0];
+            if width <= 0.0 {
+                continue;
+            }
+            sweep += ((middles[1] - middles[0]) / width).atan() * width * 0.5 * (pair[0].chord + pair[1].chord);
+            for j in 0..STRIPS {
+                let share = (f64::from(j) + 0.5) / f64::from(STRIPS);
+                let line = self.chord(k as f64 + share);
+                strips.push(Strip {
+                    width: width / f64::from(STRIPS) / 1000.0,
+                    chord: line.length() / 1000.0,
+                    twist: line.incidence() - at_mac,
+                    zero_lift: section(&pair[0]) * (1.0 - share) + section(&pair[1]) * share,
+                });
+            }
+        }
+        let span = self.panels.iter().map(|panel| panel.width).sum::<f64>() * 2.0;
+        cruise_incidence(&CruiseInput {
+            weight,
+            cruise,
+            area: area / 1e6,
+            aspect_ratio: span * span / area,
+            half_chord_sweep: sweep / (0.5 * area),
+            section_slope: THIN_SECTION,
+            strips: &strips,
+        })
     }
 
     /// A smooth surface must not swing out between stations by more than a quarter of their chords.
@@ -369,15 +385,12 @@ fn twists(spec: &Spec, zero_lift: &[f64]) -> Result<Vec<f64>, Error> {
     for (k, panel) in spec.panels.iter().enumerate() {
         let twist = match spec.setting.twist_kind {
             TwistKind::Geometric => panel.twist,
-            // an angle of attack counts from the zero-lift line: θ - α₀
-            TwistKind::Aerodynamic => panel.twist + zero_lift[k + 1] - zero_lift[0],
+            TwistKind::Aerodynamic => {
+                let last = k + 1 == spec.panels.len();
+                let place = if last { "tip".to_owned() } else { format!("end of panel {}", k + 1) };
+                geometric_twist(panel.twist, zero_lift[0], zero_lift[k + 1], &place)?
+            }
         };
-        if spec.setting.twist_kind == TwistKind::Aerodynamic && twist.abs() > LARGEST_TWIST {
-            return Err(Error::Twist {
-                panel: k + 1,
-                needed: twist.to_degrees(),
-            });
-        }
         twists.push(twist);
     }
     Ok(twists)

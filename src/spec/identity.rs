@@ -32,6 +32,7 @@ fn put(node: &Node, path: &str, lines: &mut String) {
         // adding 0 turns -0 into 0
         Value::Number(number) => *lines += &format!("{path} = {:?}\n", number + 0.0),
         Value::Text(text) => *lines += &format!("{path} = \"{}\"\n", text.escape_default()),
+        Value::Truth(truth) => *lines += &format!("{path} = {truth}\n"),
         Value::Other => *lines += &format!("{path} = {}\n", node.text.escape_default()),
     }
 }

@@ -283,6 +283,7 @@ const MEASURES: &[Measure] = &[
     measure(&["cm"], Dimension::Length, 10.0),
     measure(&["dm"], Dimension::Length, 100.0),
     measure(&["m"], Dimension::Length, 1000.0),
+    measure(&["km"], Dimension::Length, 1e6),
     measure(&["in", "inch", "\""], Dimension::Length, 25.4),
     measure(&["ft", "foot", "feet", "'"], Dimension::Length, 304.8),
     measure(&["mm^2", "mm2"], Dimension::Area, 1.0),
@@ -385,7 +386,7 @@ mod tests {
         );
         assert_eq!(
             misfit.remedy(),
-            "Units that fit: um, mm, cm, dm, m, in or ft. Write it like \"300 mm\"."
+            "Units that fit: um, mm, cm, dm, m, km, in or ft. Write it like \"300 mm\"."
         );
         assert_eq!(
             parse("3 furlong").unwrap_err().to_string(),

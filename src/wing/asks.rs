@@ -127,11 +127,8 @@ impl Asks {
         }
         if let Some(chord) = slices.at_offset(mac.offset) {
             self.length("chord of the section there", mac.local_chord, chord.length());
-            let asked = if spec.setting.at == IncidenceAt::Mac {
-                spec.setting.incidence
-            } else {
-                mac.incidence
-            };
+            let at_mac = spec.setting.at == IncidenceAt::Mac || spec.setting.for_cruise;
+            let asked = if at_mac { planform.incidence } else { mac.incidence };
             self.angle(
                 "incidence at the mean aerodynamic chord",
                 asked,

@@ -85,6 +85,7 @@ pub(super) fn notes(
                 .to_owned(),
         );
     }
+    notes.extend(spec.notes.iter().cloned());
     notes.extend(prepared.notes.iter().cloned());
     notes
 }

@@ -6,7 +6,7 @@ use super::Wing;
 use crate::measure::{Check, Quantity};
 use crate::spec::Sides;
 use crate::write::record::{
-    BuiltFigures, CheckFigures, MacFigures, MeshFigures, Record, ReferenceFigures, SectionFit,
+    BuiltFigures, CheckFigures, MacFigures, MeshFigures, Record, ReferenceFigures, SectionFit, SizingStep,
 };
 
 impl Wing {
@@ -81,6 +81,16 @@ impl Wing {
                 // a wing is built only where the check of its facets passes
                 watertight: true,
             },
+            sizing: self
+                .sizing
+                .iter()
+                .map(|step| SizingStep {
+                    name: step.name.clone(),
+                    value: step.value,
+                    unit: step.unit.to_owned(),
+                    ground: step.ground.clone(),
+                })
+                .collect(),
             notes: self.notes.clone(),
             files,
         }

@@ -11,7 +11,7 @@ use crate::measure::{self, Check, Figures, Slices, Spanwise, compare};
 use crate::mesh::{self, Mesh};
 use crate::planform::{Planform, Reference, reference_geometry};
 use crate::solid::{self, Solid};
-use crate::spec::{Sides, Spec, TipForm, TwistKind};
+use crate::spec::{Sides, Spec, Step, TipForm, TwistKind};
 
 /// A wing, built and measured.
 #[derive(Clone, Debug)]
@@ -38,6 +38,8 @@ pub struct Wing {
     pub reference: Reference,
     /// SHA-256 of the spec and the coordinate files it names, hexadecimal.
     pub spec_hash: String,
+    /// How load and cruise led to the area and the incidence.
+    pub sizing: Vec<Step>,
     /// Cautions and guidance.
     pub notes: Vec<String>,
 }
@@ -114,6 +116,8 @@ impl Wing {
         let slices = Slices::of(side, spanwise);
         let checks = compare(asks(spec, &planform, &slices));
         let reference = reference_geometry(spec, &planform);
+        let load = spec.load.iter().flat_map(|load| load.chain.iter());
+        let sizing = load.chain(&planform.chain).cloned().collect();
         let notes = notes(prepared, &planform, &starboard, &profiles);
         Ok(Self {
             spec: spec.clone(),
@@ -126,6 +130,7 @@ impl Wing {
             checks,
             meshes,
             reference,
+            sizing,
             spec_hash: prepared.hash.clone(),
             notes,
         })

@@ -21,6 +21,9 @@ pub struct Record {
     pub section_fit: SectionFit,
     /// The facets.
     pub mesh: MeshFigures,
+    /// How load and cruise led to the area and the incidence, step by step; empty without either. In SI units and degrees,
+    /// whatever the wing's unit.
+    pub sizing: Vec<SizingStep>,
     /// Cautions and guidance, each with its ground.
     pub notes: Vec<String>,
     /// Names of the files written, by kind.
@@ -103,6 +106,19 @@ pub struct CheckFigures {
     pub ok: bool,
     /// Its unit: that of the wing, its square, `deg`, or nothing.
     pub unit: String,
+}
+
+/// One step of a chain of results.
+#[derive(Clone, Debug, PartialEq, Serialize)]
+pub struct SizingStep {
+    /// What it is.
+    pub name: String,
+    /// Its value.
+    pub value: f64,
+    /// Its unit: SI, `deg`, or nothing.
+    pub unit: String,
+    /// The law or formula it comes from; `as asked` where it was given.
+    pub ground: String,
 }
 
 /// How closely the sections were fitted.

@@ -2,7 +2,7 @@
 
 use std::fmt::Write;
 
-use super::record::Record;
+use super::record::{Record, SizingStep};
 
 /// The sheet as text, ending in a line feed.
 pub fn sheet(record: &Record) -> String {
@@ -21,6 +21,7 @@ fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
         checks,
         section_fit,
         mesh,
+        sizing,
         notes,
         files,
     } = record;
@@ -28,6 +29,11 @@ fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
     let title: String = name.chars().take(100).collect();
     writeln!(out, "{title}")?;
     writeln!(out)?;
+    if !sizing.is_empty() {
+        writeln!(out, "Sizing")?;
+        chain(sizing, out)?;
+        writeln!(out)?;
+    }
     writeln!(out, "Reference wing (to the centreline, both sides)")?;
     writeln!(
         out,
@@ -119,6 +125,25 @@ fn write_sheet(record: &Record, out: &mut String) -> std::fmt::Result {
         writeln!(out)?;
         let names: Vec<&str> = files.values().map(String::as_str).collect();
         writeln!(out, "Written: {}", names.join(", "))?;
+    }
+    Ok(())
+}
+
+/// A chain of results: name, value with unit, ground.
+fn chain(steps: &[SizingStep], out: &mut String) -> std::fmt::Result {
+    let widest = |texts: &[String]| texts.iter().map(|text| text.chars().count()).max().unwrap_or(0);
+    let names: Vec<String> = steps.iter().map(|step| step.name.clone()).collect();
+    let values: Vec<String> = steps
+        .iter()
+        .map(|step| {
+            format!("{} {}", figure(step.value), step.unit)
+                .trim_end()
+                .to_owned()
+        })
+        .collect();
+    let (first, second) = (widest(&names), widest(&values));
+    for ((step, name), value) in steps.iter().zip(&names).zip(&values) {
+        writeln!(out, "  {name:<first$}  {value:>second$}  {}", step.ground)?;
     }
     Ok(())
 }

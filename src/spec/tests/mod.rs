@@ -4,8 +4,10 @@ mod accepted;
 mod contradictions;
 mod faults;
 mod identity;
+mod load;
 mod random;
 mod set;
+mod shape;
 
 use super::{Reading, Source, Spec, read};
 
