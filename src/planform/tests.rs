@@ -1,8 +1,8 @@
 //! Known answers of the reference wing.
 
 use crate::spec::{
-    AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting, Sides, Spec, StepForm, SurfaceKind, TipForm,
-    TwistKind, TwistLaw, Unit,
+    AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting, Sides, Spec, StepForm, SurfaceKind,
+    TipForm, TwistKind, TwistLaw, Unit,
 };
 
 use super::Planform;
