@@ -188,7 +188,7 @@ impl<'a> Args<'a> {
     }
 
     /// The record of an entity in an instance that this one names.
-    pub(super) fn record_of(&self, file: &Exchange<'a>, id: u64, keyword: &str) -> Read<Args<'a>> {
+    pub(super) fn record_of(&self, file: &Exchange<'a>, id: u64, keyword: &str) -> Read<Self> {
         args(file, self.named(file, id)?, keyword).map_err(|fault| {
             finding(
                 self.line,
@@ -198,7 +198,7 @@ impl<'a> Args<'a> {
     }
 
     /// The record of an entity in the instance that a parameter names.
-    pub(super) fn follow(&self, file: &Exchange<'a>, i: usize, keyword: &str) -> Read<Args<'a>> {
+    pub(super) fn follow(&self, file: &Exchange<'a>, i: usize, keyword: &str) -> Read<Self> {
         self.record_of(file, self.reference(i)?, keyword)
     }
 }

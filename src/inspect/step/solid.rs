@@ -1,5 +1,6 @@
 //! Solids: topology, integrals and bounds.
 
+use std::collections::hash_map::Entry::Vacant;
 use std::collections::{HashMap, HashSet};
 
 use nalgebra::{Point3, Vector3};
@@ -150,9 +151,8 @@ fn read_loop<'a>(
         let oriented = edge_loop.record_of(file, id, "ORIENTED_EDGE")?;
         let edge = oriented.follow(file, 3, "EDGE_CURVE")?;
         uses.push((edge.id, oriented.flag(4)?));
-        if !edges.contains_key(&edge.id) {
-            let found = Edge::read(file, &edge, tolerance, faults)?;
-            edges.insert(edge.id, found);
+        if let Vacant(place) = edges.entry(edge.id) {
+            place.insert(Edge::read(file, &edge, tolerance, faults)?);
         }
     }
     for (i, (edge, forward)) in uses.iter().enumerate() {
