@@ -33,7 +33,7 @@ struct Sums {
 
 /// Measures the solid that is made of a loft, or of two that meet in their root section.
 ///
-/// Volume and centroid are exact for the polynomial faces up to rounding; the area is a quadrature, good to about 1e-9.
+/// Volume and centroid are exact for the polynomial faces up to rounding; the area is a quadrature, good to about 1e-8.
 pub fn figures(lofts: &[&Loft]) -> Figures {
     let joined = lofts.len() > 1;
     // moments about a point inside keep rounding small
@@ -48,6 +48,16 @@ pub fn figures(lofts: &[&Loft]) -> Figures {
             sums.face(&loft.lower(k), origin, -sense);
             if let Some(base) = loft.base(k) {
                 sums.face(&base, origin, sense);
+            }
+            // the edges along the span bulge too where a panel is not straight
+            for surface in [loft.upper(k), loft.lower(k)] {
+                for point in [false, true]
+                    .iter()
+                    .flat_map(|last| dense(&surface.column_curve(*last)))
+                {
+                    least = least.inf(&point);
+                    greatest = greatest.sup(&point);
+                }
             }
         }
         let last = loft.panels();
@@ -184,6 +194,9 @@ fn at(curve: &Curve, s: f64) -> (Point3<f64>, Vector3<f64>) {
 }
 
 /// Points along a curve, close enough for a bounding box that is 1e-4 of the chord wrong at most; ends included.
-fn dense(curve: &Curve) -> impl Iterator<Item = Point3<f64>> + '_ {
-    (0..=64_u32).map(|i| curve.at(f64::from(i) / 64.0))
+fn dense(curve: &Curve) -> Vec<Point3<f64>> {
+    let (start, end) = curve.knots.range();
+    (0..=64_u32)
+        .map(|i| curve.at(start + (end - start) * f64::from(i) / 64.0))
+        .collect()
 }

@@ -5,8 +5,8 @@ use nalgebra::Point3;
 use super::Mesh;
 use super::caps::cap;
 use super::deviation::{Cell, Skin};
-use super::tip::{Side, round_tip};
 use super::spacing::{Bending, Grid};
+use super::tip::{Side, round_tip};
 use crate::loft::Loft;
 
 /// Meshes a loft, or two that meet in their root section, within `tolerance` \[mm\] of the surface.
@@ -77,7 +77,10 @@ fn on_grid(lofts: &[&Loft], grid: &Grid, tolerance: f64) -> Mesh {
         }
         match &loft.round {
             Some(tip) => {
-                let side = |corners| Side { parameters: &grid.chordwise, corners };
+                let side = |corners| Side {
+                    parameters: &grid.chordwise,
+                    corners,
+                };
                 let (upper, lower) = (side(&inner.upper), side(&inner.lower));
                 round_tip(&mut builder.mesh, tip, upper, lower, loft.port, tolerance);
             }

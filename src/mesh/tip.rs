@@ -19,7 +19,14 @@ const MOST: u32 = 200;
 
 /// Adds the facets of a round tip between the upper and the lower side of the tip section, and of the half disc behind it
 /// where the trailing edge is blunt. Lines across the tip start at the upper side's parameters.
-pub(super) fn round_tip(mesh: &mut Mesh, tip: &RoundTip, upper: Side<'_>, lower: Side<'_>, port: bool, tolerance: f64) {
+pub(super) fn round_tip(
+    mesh: &mut Mesh,
+    tip: &RoundTip,
+    upper: Side<'_>,
+    lower: Side<'_>,
+    port: bool,
+    tolerance: f64,
+) {
     let rows = (1..MOST)
         .find(|n| sagitta(tip.reach, *n) <= SHARE * tolerance)
         .unwrap_or(MOST)
@@ -33,7 +40,11 @@ pub(super) fn round_tip(mesh: &mut Mesh, tip: &RoundTip, upper: Side<'_>, lower:
         let v = [j - 1, j].map(|j| f64::from(j) / f64::from(rows));
         let mut row = vec![before[0]];
         row.extend((1..last).map(|i| builder.corner(upper.parameters[i], v[1])));
-        row.push(if blunt { builder.corner(1.0, v[1]) } else { before[last] });
+        row.push(if blunt {
+            builder.corner(1.0, v[1])
+        } else {
+            before[last]
+        });
         builder.strip((upper.parameters, &before), (upper.parameters, &row), v);
         rear.push(row[last]);
         before = row;
@@ -70,7 +81,9 @@ impl Builder<'_> {
 
     /// A facet given counter-clockwise for the starboard side.
     fn facet(&mut self, [a, b, c]: [u32; 3]) {
-        self.mesh.facets.push(if self.port { [a, c, b] } else { [a, b, c] });
+        self.mesh
+            .facets
+            .push(if self.port { [a, c, b] } else { [a, b, c] });
     }
 
     /// Facets between two lines of constant v, each with its own chordwise parameters: always on to the nearer next corner.
@@ -80,10 +93,18 @@ impl Builder<'_> {
             let first = k + 1 == to.len() || (i + 1 < from.len() && from_u[i + 1] <= to_u[k + 1]);
             let facet = if first {
                 i += 1;
-                [(from[i - 1], from_u[i - 1], v[0]), (from[i], from_u[i], v[0]), (to[k], to_u[k], v[1])]
+                [
+                    (from[i - 1], from_u[i - 1], v[0]),
+                    (from[i], from_u[i], v[0]),
+                    (to[k], to_u[k], v[1]),
+                ]
             } else {
                 k += 1;
-                [(from[i], from_u[i], v[0]), (to[k], to_u[k], v[1]), (to[k - 1], to_u[k - 1], v[1])]
+                [
+                    (from[i], from_u[i], v[0]),
+                    (to[k], to_u[k], v[1]),
+                    (to[k - 1], to_u[k - 1], v[1]),
+                ]
             };
             let [a, b, c] = facet.map(|corner| corner.0);
             if a != b && b != c && c != a {
@@ -101,8 +122,15 @@ impl Builder<'_> {
         if length == 0.0 {
             return;
         }
-        for shares in [[1.0 / 3.0; 3], [0.48, 0.48, 0.04], [0.04, 0.48, 0.48], [0.48, 0.04, 0.48]] {
-            let mix = |pick: fn(&(u32, f64, f64)) -> f64| -> f64 { facet.iter().zip(shares).map(|(p, s)| pick(p) * s).sum() };
+        for shares in [
+            [1.0 / 3.0; 3],
+            [0.48, 0.48, 0.04],
+            [0.04, 0.48, 0.48],
+            [0.48, 0.04, 0.48],
+        ] {
+            let mix = |pick: fn(&(u32, f64, f64)) -> f64| -> f64 {
+                facet.iter().zip(shares).map(|(p, s)| pick(p) * s).sum()
+            };
             let point: Point3<f64> = self.tip.surface.at(mix(|p| p.1), mix(|p| p.2));
             self.mesh.deviation = self.mesh.deviation.max((point - a).dot(&normal).abs() / length);
         }

@@ -149,7 +149,12 @@ impl Planform {
         let integrals = Integrals::of(&planform.stations, planform.fin, shape);
         let place = planform.place_of(integrals.offset());
         planform.incidence = spec.setting.incidence;
-        if let Some((load, cruise)) = spec.load.as_ref().zip(spec.cruise).filter(|_| spec.setting.for_cruise) {
+        if let Some((load, cruise)) = spec
+            .load
+            .as_ref()
+            .zip(spec.cruise)
+            .filter(|_| spec.setting.for_cruise)
+        {
             let area = 2.0 * integrals.area;
             let result = planform.for_cruise(load.weight, cruise, area, place, zero_lift)?;
             planform.incidence = result.incidence;
@@ -232,12 +237,14 @@ impl Planform {
         let (mut strips, mut sweep) = (Vec::new(), 0.0);
         for (k, pair) in self.stations.windows(2).enumerate() {
             let offsets = [k as f64, k as f64 + 1.0].map(|t| self.offset(t));
-            let middles = [&pair[0], &pair[1]].map(|station| station.nominal_leading_edge + 0.5 * station.chord);
+            let middles =
+                [&pair[0], &pair[1]].map(|station| station.nominal_leading_edge + 0.5 * station.chord);
             let width = offsets[1] - offsets[0];
             if width <= 0.0 {
                 continue;
             }
-            sweep += ((middles[1] - middles[0]) / width).atan() * width * 0.5 * (pair[0].chord + pair[1].chord);
+            sweep +=
+                ((middles[1] - middles[0]) / width).atan() * width * 0.5 * (pair[0].chord + pair[1].chord);
             for j in 0..STRIPS {
                 let share = (f64::from(j) + 0.5) / f64::from(STRIPS);
                 let line = self.chord(k as f64 + share);
@@ -387,7 +394,11 @@ fn twists(spec: &Spec, zero_lift: &[f64]) -> Result<Vec<f64>, Error> {
             TwistKind::Geometric => panel.twist,
             TwistKind::Aerodynamic => {
                 let last = k + 1 == spec.panels.len();
-                let place = if last { "tip".to_owned() } else { format!("end of panel {}", k + 1) };
+                let place = if last {
+                    "tip".to_owned()
+                } else {
+                    format!("end of panel {}", k + 1)
+                };
                 geometric_twist(panel.twist, zero_lift[0], zero_lift[k + 1], &place)?
             }
         };

@@ -164,6 +164,10 @@ fn zero_lift(prepared: &Prepared) -> Vec<f64> {
     if setting.twist_kind == TwistKind::Geometric && !setting.for_cruise {
         return vec![0.0; prepared.chosen.len()];
     }
-    let angles: Vec<f64> = prepared.sections.iter().map(|section| section.figures().zero_lift_angle).collect();
+    let angles: Vec<f64> = prepared
+        .sections
+        .iter()
+        .map(|section| section.figures().zero_lift_angle)
+        .collect();
     prepared.chosen.iter().map(|k| angles[*k]).collect()
 }
