@@ -107,9 +107,10 @@ impl Question<'_> {
             );
             return None;
         }
-        let before = faults.len();
-        faults.extend(self.out_of_range(relations, &cut, &settled));
-        if faults.len() > before {
+        let impossible = self.out_of_range(relations, &cut, &settled);
+        if let Some(first) = impossible.first() {
+            let problem = format!("with the span cut to it, {}", first.problem);
+            fault(problem, "Raise the limit, or change one of them.");
             return None;
         }
         let limit = Limit {

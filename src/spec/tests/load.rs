@@ -262,8 +262,8 @@ fn limits_that_cannot_be_kept() {
         (
             // c_m = 625000 / 100 = 6250 mm: A = 0.016
             "span_limit = 100\ntaper_ratio = 0.5\narea = 625000\naspect_ratio = 10",
-            "wing.toml:6: planform.area = 625000: span and area = 625000 mm^2 (line 6) make aspect_ratio 0.016; allowed: 0.1 to \
-             100\n  Change one of them.",
+            "wing.toml:4: planform.span_limit = 100: with the span cut to it, span and area = 625000 mm^2 (line 6) make aspect_ratio 0.016; allowed: 0.1 to \
+             100\n  Raise the limit, or change one of them.",
         ),
         (
             "span_limit = 1800\nroot_chord = 300\n[[panel]]\nspan = 1000\ntip_chord = 200",
