@@ -38,4 +38,6 @@ pub mod inspect;
 
 pub mod wing;
 
+pub mod family;
+
 pub mod cli;

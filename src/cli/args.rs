@@ -4,6 +4,7 @@ use std::path::PathBuf;
 
 use clap::{Args, Parser, Subcommand};
 
+use super::family::FamilyOptions;
 use crate::wing::Kind;
 
 /// Turns the numbers of a wing into an exact solid, and shows that the solid has those numbers.
@@ -27,6 +28,8 @@ pub(super) enum Command {
     Begin,
     /// Build one wing: STEP, STL and figures, and a proof sheet of what was asked for beside what was measured
     Loft(LoftOptions),
+    /// Build many variants of one wing, and a table of their figures
+    Family(FamilyOptions),
     /// Read files back: what is in them, measured from their own numbers beside what they state, and where they disagree
     Inspect(InspectOptions),
 }
@@ -62,7 +65,7 @@ fn setting(text: &str) -> Result<(String, String), String> {
     }
 }
 
-fn kind(text: &str) -> Result<Kind, String> {
+pub(super) fn kind(text: &str) -> Result<Kind, String> {
     let known = || Kind::ALL.map(Kind::name).join(", ");
     Kind::ALL
         .into_iter()

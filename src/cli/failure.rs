@@ -6,6 +6,7 @@ use std::path::PathBuf;
 use thiserror::Error;
 
 use crate::inspect;
+use super::family::Trouble;
 use crate::spec::Fault;
 use crate::wing;
 
@@ -61,6 +62,9 @@ pub(super) enum Failure {
     /// A time stamp that is none.
     #[error("SOURCE_DATE_EPOCH = {0}: not a number of seconds between 0 and 253402300799")]
     Epoch(String),
+    /// A family of wings that was not built, or not to its end.
+    #[error(transparent)]
+    Family(#[from] Trouble),
 }
 
 fn list(faults: &[Fault]) -> String {

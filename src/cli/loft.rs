@@ -1,6 +1,5 @@
 //! `spanwise loft`
 
-use std::collections::BTreeMap;
 use std::path::Path;
 
 use super::args::LoftOptions;
@@ -39,35 +38,26 @@ pub(super) fn run(options: &LoftOptions, output: &Output) -> Result<bool, Failur
         .into_iter()
         .filter(|kind| options.only.is_empty() || options.only.contains(kind))
         .collect();
-    let names: BTreeMap<String, String> = kinds.iter().flat_map(|kind| wing.names(*kind, &stem)).collect();
-    let record = wing.record(names);
+    let named = Options {
+        time_stamp: &stamp,
+        id: &stem,
+    };
+    let contents = wing.contents(&kinds, named).map_err(broken)?;
     let mut files = Files::open(&options.output)?;
-    for kind in &kinds {
-        let contents = match kind {
-            Kind::Step => vec![
-                wing.step(Options {
-                    time_stamp: &stamp,
-                    id: &stem,
-                })
-                .map_err(broken)?,
-            ],
-            Kind::Stl => wing.stl(),
-            Kind::Json => vec![record::json(&record).into_bytes()],
-        };
-        for ((_, name), bytes) in wing.names(*kind, &stem).iter().zip(contents) {
-            files.add(name, &bytes)?;
-        }
+    for (name, bytes) in &contents.files {
+        files.add(name, bytes)?;
     }
     files.keep()?;
     output.print(&if output.json {
-        record::json(&record)
+        record::json(&contents.record)
     } else {
-        sheet::sheet(&record)
+        sheet::sheet(&contents.record)
     })?;
     Ok(wing.is_as_asked())
 }
 
-fn read_text(path: &Path) -> Result<String, Failure> {
+/// The text of a spec file, without a byte-order mark.
+pub(super) fn read_text(path: &Path) -> Result<String, Failure> {
     let failure = |source| Failure::Read {
         path: path.to_path_buf(),
         source,

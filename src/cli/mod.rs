@@ -4,6 +4,7 @@ mod args;
 mod begin;
 mod failure;
 mod inspect;
+mod family;
 mod loft;
 mod output;
 mod stamp;
@@ -14,15 +15,18 @@ use std::process::ExitCode;
 use clap::Parser;
 
 use args::{Arguments, Command};
+use failure::Failure;
 use output::Output;
 
 /// Exit code where something asked for is out of tolerance.
 const OUT_OF_TOLERANCE: u8 = 1;
 /// Exit code for bad input, usage or files.
 const BAD_INPUT: u8 = 2;
+/// Exit code where a run was stopped by a signal: 128 + the interrupt's number, as shells have it.
+const STOPPED: u8 = 130;
 
 /// Runs the program with its arguments (the first is its name) and returns its exit code: 0 done, 1 something asked for
-/// is out of tolerance, 2 bad input, usage or file.
+/// is out of tolerance or a variant failed, 2 bad input, usage or file, 130 stopped by a signal.
 pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
     let arguments = match Arguments::try_parse_from(arguments) {
         Ok(arguments) => arguments,
@@ -42,6 +46,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
     let result = match &arguments.command {
         Command::Begin => begin::run(&output),
         Command::Inspect(options) => inspect::run(options, &output),
+        Command::Family(options) => family::run(options, &output),
         Command::Loft(options) => loft::run(options, &output),
     };
     match result {
@@ -49,7 +54,10 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
         Ok(false) => ExitCode::from(OUT_OF_TOLERANCE),
         Err(failure) => {
             output.complain(&failure);
-            ExitCode::from(BAD_INPUT)
+            ExitCode::from(match failure {
+                Failure::Family(family::Trouble::Stopped { .. }) => STOPPED,
+                _ => BAD_INPUT,
+            })
         }
     }
 }

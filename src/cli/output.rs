@@ -29,6 +29,14 @@ impl Output {
         }
     }
 
+    /// Says on standard error what deserves notice.
+    pub(super) fn warn(&self, text: &str) {
+        if !self.quiet {
+            // with standard error gone there is nobody left to tell
+            let _ = writeln!(io::stderr(), "{text}");
+        }
+    }
+
     /// Says on standard error why a command failed.
     pub(super) fn complain(&self, failure: &Failure) {
         // with standard error gone there is nobody left to tell

@@ -12,6 +12,7 @@ mod fuselage;
 mod identity;
 mod keys;
 mod limit;
+mod lookup;
 mod panels;
 mod planform;
 mod quantity;
@@ -31,6 +32,7 @@ pub use choices::{
 };
 pub use fault::{Fault, Place, sort_faults};
 pub use keys::keys;
+pub use lookup::{known, lasting_faults, shortened};
 pub use panels::ReferencePlane;
 pub use reading::{Reading, Source, read, starter};
 pub use step::{StepForm, StepReference, StepSchema};

@@ -4,7 +4,9 @@
 //! back as bytes.
 
 mod asks;
+mod contents;
 mod files;
+mod library;
 mod notes;
 mod prepare;
 mod record;
@@ -12,8 +14,10 @@ mod shape;
 #[cfg(test)]
 mod tests;
 
+pub use contents::Contents;
 pub use files::{Kind, Options};
-pub use prepare::{Prepared, prepare};
+pub use library::Library;
+pub use prepare::{Prepared, prepare, prepare_with};
 pub use shape::Wing;
 
 use thiserror::Error;

@@ -1,10 +1,12 @@
 //! From texts to a resolved spec and its exact sections, or to every fault of both.
 
 use std::io;
+use std::sync::Arc;
 
 use sha2::{Digest, Sha256};
 
-use crate::airfoil::{self, Closing, Section, coordinates};
+use super::library::{Library, Loaded};
+use crate::airfoil::{self, Closing, Profiles, Section, coordinates};
 use crate::spec::{self, AirfoilSource, Fault, Source, Spec, sort_faults};
 
 /// A spec with its sections, ready to be built.
@@ -20,6 +22,8 @@ pub struct Prepared {
     pub notes: Vec<String>,
     /// SHA-256 of the spec, `--set` values included, and of the coordinate files it names; hexadecimal.
     pub hash: String,
+    /// The sections' fit, where a library has it or could make it.
+    pub(super) fitted: Option<Arc<Profiles>>,
 }
 
 /// Reads a spec and the sections it names. `open` reads a coordinate file, given its path as the spec has it.
@@ -35,6 +39,22 @@ pub fn prepare(
     source: &Source<'_>,
     open: &dyn Fn(&str) -> io::Result<Vec<u8>>,
 ) -> Result<Prepared, Vec<Fault>> {
+    prepare_with(source, &Library::new(open))
+}
+
+/// The same with sections and fits out of a library that other wings use too.
+///
+/// # Errors
+///
+/// As [`prepare`].
+///
+/// # Panics
+///
+/// Never, as [`prepare`].
+pub fn prepare_with<F: Fn(&str) -> io::Result<Vec<u8>>>(
+    source: &Source<'_>,
+    library: &Library<F>,
+) -> Result<Prepared, Vec<Fault>> {
     let reading = spec::read(source);
     let mut faults = reading.faults;
     let sharp = reading
@@ -49,8 +69,15 @@ pub fn prepare(
             continue;
         }
         texts.push(airfoil.text.clone());
-        match load(airfoil, sharp, open, &mut notes, &mut hash) {
-            Ok(section) => sections.push(section),
+        match library.section(&airfoil.text, sharp, || load(airfoil, sharp, &library.open)) {
+            Ok(loaded) => {
+                if let Some(bytes) = &loaded.bytes {
+                    hash_part(&mut hash, airfoil.text.as_bytes());
+                    hash_part(&mut hash, bytes);
+                }
+                sections.push(loaded.section.clone());
+                notes.extend(loaded.note.clone());
+            }
             Err(fault) => faults.push(*fault),
         }
     }
@@ -63,6 +90,8 @@ pub fn prepare(
     let chosen = (std::iter::once(&spec.root_airfoil).chain(spec.panels.iter().map(|panel| &panel.airfoil)))
         .map(|airfoil| find(airfoil).expect("a reading names every airfoil of its spec"))
         .collect();
+    // a fit that fails is tried again, and its failure reported, where the wing is built
+    let fitted = library.fit(texts, sharp, &sections).ok();
     Ok(Prepared {
         spec,
         sections,
@@ -71,6 +100,7 @@ pub fn prepare(
         hash: (hash.finalize().iter())
             .map(|byte| format!("{byte:02x}"))
             .collect(),
+        fitted,
     })
 }
 
@@ -84,9 +114,7 @@ fn load(
     airfoil: &AirfoilSource,
     sharp: bool,
     open: &dyn Fn(&str) -> io::Result<Vec<u8>>,
-    notes: &mut Vec<String>,
-    hash: &mut Sha256,
-) -> Result<Section, Box<Fault>> {
+) -> Result<Loaded, Box<Fault>> {
     let text = airfoil.text.as_str();
     let fault = |problem: String, remedy: String| {
         Box::new(Fault {
@@ -101,7 +129,13 @@ fn load(
         if sharp {
             formula.thickness.closing = Closing::Coefficient;
         }
-        return Section::from_formula(text, formula).map_err(|e| fault(e.to_string(), String::new()));
+        let section =
+            Section::from_formula(text, formula).map_err(|e| fault(e.to_string(), String::new()))?;
+        return Ok(Loaded {
+            section,
+            note: None,
+            bytes: None,
+        });
     }
     let bytes = open(text).map_err(|e| {
         fault(
@@ -109,8 +143,6 @@ fn load(
             "give a designation such as \"NACA 2412\", or the path of a coordinate file relative to the spec file".into(),
         )
     })?;
-    hash_part(hash, text.as_bytes());
-    hash_part(hash, &bytes);
     let contour = coordinates::read(&bytes, text).map_err(|e| {
         let place = if e.line() > 0 {
             format!(":{}", e.line())
@@ -128,11 +160,11 @@ fn load(
         )
     })?;
     let section = Section::from_contour(text, &contour).map_err(|e| fault(e.to_string(), String::new()))?;
-    if !contour.notes.is_empty() {
-        notes.push(format!(
-            "{text}: {}.",
-            contour.notes.join("; ").trim_end_matches('.')
-        ));
-    }
-    Ok(section)
+    let note = (!contour.notes.is_empty())
+        .then(|| format!("{text}: {}.", contour.notes.join("; ").trim_end_matches('.')));
+    Ok(Loaded {
+        section,
+        note,
+        bytes: Some(bytes),
+    })
 }

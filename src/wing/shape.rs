@@ -55,12 +55,16 @@ impl Wing {
             spec,
             sections,
             chosen,
+            fitted,
             ..
         } = prepared;
         let zero_lift = zero_lift(prepared);
         let planform = Planform::of(spec, &zero_lift)?;
         let sections: Vec<&airfoil::Section> = sections.iter().collect();
-        let profiles = airfoil::fit(&sections, airfoil::TOLERANCE)?;
+        let profiles = match fitted {
+            Some(profiles) => Profiles::clone(profiles),
+            None => airfoil::fit(&sections, airfoil::TOLERANCE)?,
+        };
         let given = sections
             .iter()
             .map(|section| section.deviation)
