@@ -12,6 +12,9 @@ mod workdir; // a directory of its own for a run of the program
 mod bad_files; // missing, malformed and unwritable files, wrong usage: nothing is left behind
 mod bad_spec; // faults of a spec: what is said about them
 mod examples; // every example, as programs see it that know nothing of this one
+mod family; // families of wings: tables, files and figures that belong together
+mod family_refused; // bad tables, sweeps, names and specs: refused before work
+mod family_stopped; // killed, interrupted, run twice at once, gone on with
 mod inspecting; // the command that reads files back: tables, JSON, exit codes
 mod known_answers; // closed forms and published wings
 mod layers; // each module imports only from those before it

@@ -70,7 +70,7 @@ fn number(value: f64, step: f64) -> String {
             (scaled - scaled.round()).abs() < 1e-6
         })
         .unwrap_or(12);
-    if value.abs() >= 1e7 {
+    if value.abs() >= 1e10 {
         return format!("{value:e}");
     }
     let places = usize::try_from(decimals).unwrap_or_default();
@@ -111,7 +111,7 @@ mod tests {
         assert_eq!(texts(&[6.0, 12.0]), ["6", "8", "10", "12"]);
         assert_eq!(texts(&[0.3, 0.6]), ["0.3", "0.4", "0.5", "0.6"]);
         assert_eq!(texts(&[-3.0, 0.0]), ["-3", "-2", "-1", "0"]);
-        assert_eq!(texts(&[2e7, 4e7]), ["2e7", "3e7", "4e7"]);
+        assert_eq!(texts(&[2e10, 4e10]), ["2e10", "3e10", "4e10"]);
         for alone in [0.0, 7.0, -1e-9, 3e8] {
             let axis = Axis::of_numbers(&[alone]);
             assert!(

@@ -14,6 +14,7 @@ use super::line::{Line, Status};
 use super::plan::{Plan, Variant};
 use crate::spec::{Fault, Place, Source};
 use crate::wing::{Kind, Library, Options, Prepared, Wing, prepare_with};
+use crate::write::record::Record;
 
 /// A plan with the spec that it varies.
 #[derive(Debug)]
@@ -51,6 +52,8 @@ pub struct Outcome {
     pub variant: Variant,
     /// Its line in `family.jsonl`.
     pub line: Line,
+    /// Its figures; none where it was not built.
+    pub record: Option<Record>,
     /// Name and bytes of each of its files; none where it was not built.
     pub files: Vec<(String, Vec<u8>)>,
 }
@@ -94,21 +97,26 @@ impl<F: Fn(&str) -> io::Result<Vec<u8>>> Family<F> {
             files_hash: None,
             figures: None,
         };
-        let files = match built {
+        let (record, files) = match built {
             Ok(made) => {
                 line.status = made.status;
                 line.figures = Some(made.figures);
                 line.files_hash = Some(files_hash(
                     (made.files.iter()).map(|(name, bytes)| (name.as_str(), bytes.as_slice())),
                 ));
-                made.files
+                (Some(made.record), made.files)
             }
             Err(error) => {
                 line.error = Some(error);
-                Vec::new()
+                (None, Vec::new())
             }
         };
-        Outcome { variant, line, files }
+        Outcome {
+            variant,
+            line,
+            record,
+            files,
+        }
     }
 
     /// What a variant varies, as a JSON object with the keys in the plan's order.
@@ -181,6 +189,7 @@ impl<F: Fn(&str) -> io::Result<Vec<u8>>> Family<F> {
                 Status::Out
             },
             figures,
+            record: contents.record,
             files: contents.files,
         })
     }
@@ -217,6 +226,7 @@ impl<F: Fn(&str) -> io::Result<Vec<u8>>> Family<F> {
 struct Made {
     status: Status,
     figures: Box<RawValue>,
+    record: Record,
     files: Vec<(String, Vec<u8>)>,
 }
 
