@@ -38,8 +38,11 @@ pub(super) fn leading(text: &str) -> Option<(Decimal, &str)> {
     let end = text
         .find(|c: char| !(c.is_ascii_digit() || "+-.eE".contains(c)))
         .unwrap_or(text.len());
+    // a number with more digits than can be reckoned with is not cut in two
+    let whole = |rest: &str| !rest.starts_with(|c: char| c.is_ascii_digit() || c == '.');
     (1..=end)
         .rev()
+        .filter(|i| whole(&text[*i..]))
         .find_map(|i| Some((number(&text[..i])?, text[i..].trim())))
 }
 
@@ -89,7 +92,14 @@ mod tests {
             leading("84 N/m^2").map(|(n, u)| (n.to_string(), u)),
             Some(("84".into(), "N/m^2"))
         );
-        for text in ["", "m", "NACA 2412", "../a.dat", "."] {
+        for text in [
+            "",
+            "m",
+            "NACA 2412",
+            "../a.dat",
+            ".",
+            "99999999999999999999999999999999",
+        ] {
             assert!(leading(text).is_none(), "{text}");
         }
     }

@@ -142,11 +142,12 @@ impl Table {
             .flexible(true)
             .from_reader(bytes);
         let mut record = csv::ByteRecord::new();
+        let mut ends = LineEnds::of(bytes);
         let mut next = |record: &mut csv::ByteRecord| {
             // a slice in memory always reads, and flexible rows are never of a wrong length
             let more = reader.read_byte_record(record).unwrap_or(false);
-            let row = record.position().map_or(1, csv::Position::line);
-            more.then_some(row)
+            let start = record.position().map_or(0, csv::Position::byte);
+            more.then(|| ends.row(usize::try_from(start).unwrap_or(usize::MAX)))
         };
         let Some(row) = next(&mut record) else {
             return Err(TableError::Empty);
@@ -233,6 +234,35 @@ impl Table {
                 })
             }
         }
+    }
+}
+
+/// Counts the rows of a text: a record's place, as the reader has it, comes before the line ends in front of it.
+struct LineEnds<'a> {
+    bytes: &'a [u8],
+    at: usize,
+    row: u64,
+}
+
+impl<'a> LineEnds<'a> {
+    const fn of(bytes: &'a [u8]) -> Self {
+        Self { bytes, at: 0, row: 1 }
+    }
+
+    /// The row of the record that begins at a place or after the line ends there; places come in their order.
+    fn row(&mut self, place: usize) -> u64 {
+        while let Some(byte) = self.bytes.get(self.at) {
+            let ends = matches!(byte, b'\n' | b'\r');
+            if self.at >= place && !ends {
+                break;
+            }
+            self.at += 1;
+            // a carriage return before a line feed is part of the same end
+            if *byte == b'\n' || (*byte == b'\r' && self.bytes.get(self.at) != Some(&b'\n')) {
+                self.row += 1;
+            }
+        }
+        self.row
     }
 }
 
