@@ -13,6 +13,7 @@ mod bad_files; // missing, malformed and unwritable files, wrong usage: nothing 
 mod bad_spec; // faults of a spec: what is said about them
 mod examples; // every example, as programs see it that know nothing of this one
 mod family; // families of wings: tables, files and figures that belong together
+mod family_outside; // a mixed family read back from outside; the examples of families, run
 mod family_refused; // bad tables, sweeps, names and specs: refused before work
 mod family_stopped; // killed, interrupted, run twice at once, gone on with
 mod inspecting; // the command that reads files back: tables, JSON, exit codes

@@ -17,6 +17,7 @@ mod plot;
 mod row;
 mod run;
 mod table;
+mod table_error;
 mod vary;
 
 pub use hash::{files_hash, inputs_hash};
@@ -27,5 +28,6 @@ pub use plan::{MOST_VARIANTS, Plan, PlanError, Variant};
 pub use plot::{Plot, PlotError, figure_keys};
 pub use row::{header, row};
 pub use run::JobsError;
-pub use table::{MOST_ROWS, Table, TableError};
+pub use table::{MOST_ROWS, Table};
+pub use table_error::TableError;
 pub use vary::{MOST_VALUES, Vary, VaryError};
