@@ -5,8 +5,8 @@ use std::path::PathBuf;
 
 use thiserror::Error;
 
-use crate::inspect;
 use super::family::Trouble;
+use crate::inspect;
 use crate::spec::Fault;
 use crate::wing;
 

@@ -3,8 +3,8 @@
 mod args;
 mod begin;
 mod failure;
-mod inspect;
 mod family;
+mod inspect;
 mod loft;
 mod output;
 mod stamp;

@@ -198,28 +198,14 @@ impl<F: Fn(&str) -> io::Result<Vec<u8>>> Family<F> {
         let stem = Path::new(&self.file)
             .file_stem()
             .map_or_else(String::new, |stem| stem.to_string_lossy().into_owned());
-        let set = self.plan.set(variant);
-        let coordinates: Vec<Vec<u8>> = prepared
-            .sections
-            .iter()
-            .filter_map(|section| self.library.coordinates(&section.name))
-            .collect();
         let parts = [
-            self.text.as_bytes(),
+            prepared.hash.as_bytes(),
             stem.as_bytes(),
             self.time_stamp.as_bytes(),
             variant.name.as_bytes(),
         ];
         let kinds = self.kinds.iter().map(|kind| kind.name().as_bytes());
-        let values = set
-            .iter()
-            .flat_map(|(key, value)| [key.as_bytes(), value.as_bytes()]);
-        inputs_hash(
-            (parts.into_iter())
-                .chain(kinds)
-                .chain(values)
-                .chain(coordinates.iter().map(Vec::as_slice)),
-        )
+        inputs_hash(parts.into_iter().chain(kinds))
     }
 }
 

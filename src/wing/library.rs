@@ -44,15 +44,6 @@ impl<F: Fn(&str) -> io::Result<Vec<u8>>> Library<F> {
         }
     }
 
-    /// The bytes of a coordinate file that has been read for a spec, by its path as the spec has it.
-    pub fn coordinates(&self, text: &str) -> Option<Vec<u8>> {
-        let kept = lock(&self.sections);
-        [false, true]
-            .into_iter()
-            .find_map(|sharp| kept.get(&(text.to_owned(), sharp)))
-            .and_then(|loaded| loaded.bytes.clone())
-    }
-
     /// A section that is kept, or the one that `load` gives.
     pub(super) fn section<E>(
         &self,
