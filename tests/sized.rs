@@ -94,7 +94,12 @@ fn asks_that_contradict_each_other_are_refused() {
     let said = refused(&sized("aspect_ratio = 8\nspan = \"2 m\""));
     assert_says(
         &said,
-        &["wing.toml:11", "aspect_ratio", "area from [load]", "planform.span"],
+        &[
+            "wing.toml:11",
+            "aspect_ratio",
+            "area from [load]",
+            "planform.span",
+        ],
     );
     let said = refused(&sized("aspect_ratio = 8\narea = \"0.8 m^2\""));
     assert_says(&said, &["wing.toml:11", "area", "[load]", "-9.52 %"]);
