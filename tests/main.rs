@@ -25,3 +25,4 @@ mod same_bytes; // same input, same bytes
 mod sized; // wings sized by what they carry
 mod step_edits; // single edits of a STEP file are found or harmless; what is no STEP file is refused
 mod step_forms; // every unit, side, schema and form of reference geometry, read by Open CASCADE and by inspect
+mod section; // `section`, and sections with changes in a wing

@@ -8,7 +8,7 @@ use thiserror::Error;
 use super::family::Trouble;
 use crate::inspect;
 use crate::spec::Fault;
-use crate::wing;
+use crate::wing::{self, Refused};
 
 /// A failure that ends a command.
 #[derive(Debug, Error)]
@@ -48,6 +48,14 @@ pub(super) enum Failure {
         /// Why.
         source: inspect::Error,
     },
+    /// A section that is none.
+    #[error("{airfoil}: {refused}{}", advice(.refused))]
+    Section {
+        /// The section as typed.
+        airfoil: String,
+        /// Why.
+        refused: Refused,
+    },
     /// A file that cannot be written.
     #[error("{}: cannot be written: {source}", path.display())]
     Write {
@@ -73,4 +81,11 @@ fn list(faults: &[Fault]) -> String {
         .map(ToString::to_string)
         .collect::<Vec<_>>()
         .join("\n")
+}
+
+fn advice(refused: &Refused) -> String {
+    match refused.remedy() {
+        "" => String::new(),
+        remedy => format!("\n  {remedy}"),
+    }
 }

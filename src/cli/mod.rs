@@ -7,6 +7,7 @@ mod family;
 mod inspect;
 mod loft;
 mod output;
+mod section;
 mod stamp;
 
 use std::ffi::OsString;
@@ -48,6 +49,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
         Command::Inspect(options) => inspect::run(options, &output),
         Command::Family(options) => family::run(options, &output),
         Command::Loft(options) => loft::run(options, &output),
+        Command::Section(options) => section::run(options, &output),
     };
     match result {
         Ok(true) => ExitCode::SUCCESS,

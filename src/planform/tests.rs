@@ -1,8 +1,8 @@
 //! Known answers of the reference wing.
 
 use crate::spec::{
-    AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting, Sides, Spec, StepForm, SurfaceKind,
-    TipForm, TwistKind, TwistLaw, Unit,
+    AirfoilChanges, AirfoilForm, AirfoilSource, IncidenceAt, Outline, Panel, Place, Placing, Setting,
+    SharpBy, Sides, Spec, StepForm, SurfaceKind, TipForm, TwistKind, TwistLaw, Unit,
 };
 
 use super::Planform;
@@ -10,6 +10,8 @@ use super::Planform;
 fn airfoil() -> AirfoilSource {
     AirfoilSource {
         text: "NACA 0012".into(),
+        form: AirfoilForm::Either,
+        changes: AirfoilChanges::default(),
         place: Place::default(),
     }
 }
@@ -41,6 +43,7 @@ fn wing(root_chord: f64, panels: &[(f64, f64, f64)]) -> Spec {
             for_cruise: false,
         },
         trailing_edge: None,
+        sharp_by: SharpBy::default(),
         facet_tolerance: 0.05,
         sides: Sides::Both,
         step: StepForm::default(),

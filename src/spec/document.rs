@@ -8,6 +8,7 @@ use toml::de::{DeTable, DeValue};
 
 use super::fault::{Fault, Place, excerpt};
 use super::keys::{self, Kind};
+use super::written::CHANGED;
 
 /// A value of the document.
 #[derive(Clone, Debug)]
@@ -18,6 +19,8 @@ pub(super) struct Node {
     pub(super) text: String,
     /// The value.
     pub(super) value: Value,
+    /// The text that stood here before `--set` gave it changes and so made it a table.
+    pub(super) plain: Option<Box<Self>>,
 }
 
 impl Node {
@@ -132,6 +135,7 @@ impl Origin<'_> {
             place: self.place(path, header.start),
             text: String::new(),
             value: Value::Table(members),
+            plain: None,
         }
     }
 
@@ -170,6 +174,7 @@ impl Origin<'_> {
             place: self.place(path, at),
             text,
             value: parsed,
+            plain: None,
         }
     }
 }
@@ -190,8 +195,8 @@ fn join(path: &str, name: &str) -> String {
     }
 }
 
-/// How many parts the longest dotted key has, as in `panel.0.sweep`.
-const DEEPEST: usize = 3;
+/// How many parts the longest dotted key has, as in `panel.0.airfoil.camber`.
+const DEEPEST: usize = 4;
 
 /// Puts a `--set` value into the tree: overrides, or adds.
 ///
@@ -223,7 +228,7 @@ pub(super) fn set(root: &mut Node, key: &str, value: &str) -> Result<(), Box<Fau
     if parts.len() > DEEPEST {
         return Err(fault(
             "no key has so many parts".to_owned(),
-            "The longest are like panel.0.sweep.",
+            "The longest are like panel.0.airfoil.camber.",
         ));
     }
     let mut node = root;
@@ -236,7 +241,18 @@ pub(super) fn set(root: &mut Node, key: &str, value: &str) -> Result<(), Box<Fau
                 Some(table) if table.many && depth == 0 => Value::List(Vec::new()),
                 _ => Value::Table(BTreeMap::new()),
             },
+            plain: None,
         };
+        if is_airfoil(&parts[..depth]) && matches!(node.value, Value::Text(_)) {
+            let table = Node {
+                place: place(path.clone()),
+                text: String::new(),
+                value: Value::Table(BTreeMap::new()),
+                plain: None,
+            };
+            let plain = std::mem::replace(node, table);
+            node.plain = Some(Box::new(plain));
+        }
         node = match &mut node.value {
             Value::Table(members) => members.entry((*part).to_owned()).or_insert_with(empty),
             Value::List(items) => {
@@ -269,14 +285,27 @@ pub(super) fn set(root: &mut Node, key: &str, value: &str) -> Result<(), Box<Fau
     Ok(())
 }
 
+/// What the value at a dotted path is.
+fn kind(parts: &[&str]) -> Option<Kind> {
+    let (table, name) = match *parts {
+        [name] => ("", name),
+        [table, name] | [table, _, name] => (table, name),
+        _ => return None,
+    };
+    keys::key(keys::table(table)?, name).map(|key| key.kind)
+}
+
+fn is_airfoil(parts: &[&str]) -> bool {
+    matches!(kind(parts), Some(Kind::Airfoil))
+}
+
 /// The node for a `--set` value: TOML where it is TOML, otherwise the bare text. A key that wants text takes digits too.
 fn typed(parts: &[&str], text: &str, place: Place) -> Node {
-    let kind = match *parts {
-        [name] => keys::table("").and_then(|table| keys::key(table, name)),
-        [table, name] | [table, _, name] => keys::table(table).and_then(|table| keys::key(table, name)),
-        _ => None,
+    let kind = match parts {
+        [before @ .., name] if is_airfoil(before) => keys::key(&CHANGED, name).map(|key| key.kind),
+        _ => kind(parts),
     };
-    let wants_text = kind.is_some_and(|key| matches!(key.kind, Kind::Text | Kind::Choice(_)));
+    let wants_text = matches!(kind, Some(Kind::Text | Kind::Choice(_) | Kind::Airfoil));
     let bare = Value::Text(text.to_owned());
     let origin = Origin {
         text,
@@ -288,6 +317,7 @@ fn typed(parts: &[&str], text: &str, place: Place) -> Node {
         .map(|value| origin.node(&value, &place.key, &(0..0)).value);
     let value = match parsed {
         Some(value @ Value::Text(_)) => value,
+        Some(value @ Value::Table(_)) if matches!(kind, Some(Kind::Airfoil)) => value,
         Some(value) if !wants_text => value,
         _ => bare,
     };
@@ -295,5 +325,6 @@ fn typed(parts: &[&str], text: &str, place: Place) -> Node {
         place,
         text: excerpt(text),
         value,
+        plain: None,
     }
 }

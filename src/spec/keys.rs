@@ -1,7 +1,7 @@
 //! The keys that a spec may have: names, kinds and ranges; one list for reading, messages and advice.
 
 use super::quantity::Dimension;
-use super::written::TABLES;
+use super::written::{CHANGED, TABLES};
 
 /// A table of the spec, or its top level (with an empty name).
 #[derive(Debug)]
@@ -40,6 +40,8 @@ pub(super) enum Kind {
     Point(Range),
     /// True or false.
     Flag,
+    /// A section: a text, or a table of the keys in [`CHANGED`].
+    Airfoil,
 }
 
 impl Key {
@@ -98,6 +100,15 @@ impl Key {
         Self {
             name,
             kind: Kind::Flag,
+            stated: false,
+        }
+    }
+
+    /// A section.
+    pub(super) const fn airfoil(name: &'static str) -> Self {
+        Self {
+            name,
+            kind: Kind::Airfoil,
             stated: false,
         }
     }
@@ -167,6 +178,16 @@ impl Range {
         high_allowed: false,
         ..Self::above(0.0, 0.1, "more than 0, less than 10 %")
     };
+    /// A section's thickness as a part of the chord.
+    pub(super) const SECTION_THICKNESS: Self =
+        Self::closed(0.01, 0.40, "0.01 to 0.4 (1 % to 40 % of the chord)");
+    /// A section's camber as a part of the chord.
+    pub(super) const SECTION_CAMBER: Self = Self {
+        remedy: "Write a camber in that range; inverted = true turns a section upside down.",
+        ..Self::closed(0.0, 0.15, "0 to 0.15 (0 % to 15 % of the chord)")
+    };
+    /// How far smoothing may move a point, as a part of the chord.
+    pub(super) const FAIRING: Self = Self::closed(1e-6, 0.005, "1e-6 to 0.005 of the chord");
     /// A place.
     pub(super) const PLACE: Self = Self::closed(-1e6, 1e6, "-1000 m to 1000 m");
     /// A mass.
@@ -230,7 +251,13 @@ impl Range {
 pub fn keys() -> Vec<String> {
     let mut keys = Vec::new();
     for table in TABLES {
-        keys.extend(table.keys.iter().map(|key| path(table, key)));
+        for key in table.keys {
+            let path = path(table, key);
+            let inner = CHANGED.keys.iter().map(|inner| format!("{path}.{}", inner.name));
+            let inner: Vec<_> = inner.filter(|_| matches!(key.kind, Kind::Airfoil)).collect();
+            keys.push(path);
+            keys.extend(inner);
+        }
     }
     keys
 }
@@ -279,6 +306,18 @@ pub(super) fn nearest(within: &str, name: &str) -> Option<String> {
         }
     }
     best.1
+}
+
+/// The key of a table in the place of an airfoil's text that is nearest to an unknown `name`; `None` where none is near.
+pub(super) fn nearest_change(name: &str) -> Option<&'static str> {
+    let name = name.to_lowercase().replace(['-', ' '], "_");
+    let near = CHANGED
+        .keys
+        .iter()
+        .map(|key| (likeness(&name, key.name), key.name));
+    near.filter(|(likeness, _)| *likeness > NEAR)
+        .max_by(|a, b| a.0.total_cmp(&b.0))
+        .map(|(_, name)| name)
 }
 
 /// Likeness below which a key is no help.

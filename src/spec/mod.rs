@@ -3,6 +3,7 @@
 //! [`read`] takes the text and gives a [`Reading`]: the resolved [`Spec`], or every [`Fault`] of the file at once.
 //! All lengths here are millimetres, all angles radians (see the crate's conventions).
 
+mod airfoil;
 mod atmosphere;
 mod choices;
 mod document;
@@ -27,6 +28,7 @@ mod unit;
 mod unknown;
 mod written;
 
+pub use airfoil::{AirfoilChanges, AirfoilForm, AirfoilSource, SharpBy};
 pub use choices::{
     Body, Cruise, Load, Outline, Placing, Position, Step, SurfaceKind, TipForm, TwistKind, TwistLaw,
 };
@@ -57,6 +59,8 @@ pub struct Spec {
     pub setting: Setting,
     /// Least trailing-edge thickness \[mm\]: `None` as the sections define it, `Some(0.0)` sharp.
     pub trailing_edge: Option<f64>,
+    /// How the formulas of sections are closed where the trailing edge is sharp.
+    pub sharp_by: SharpBy,
     /// Largest distance between a facet and the surface \[mm\].
     pub facet_tolerance: f64,
     /// Which sides are built.
@@ -155,15 +159,6 @@ pub enum Sides {
     Port,
     /// Two solids, one a side.
     Pair,
-}
-
-/// Where a section's shape comes from, as the spec states it.
-#[derive(Clone, Debug, PartialEq)]
-pub struct AirfoilSource {
-    /// The text as typed: a designation such as `NACA 2412`, or a path relative to the spec file.
-    pub text: String,
-    /// Where it was typed.
-    pub place: Place,
 }
 
 /// An extra construction line: a spar, a hinge line.

@@ -11,7 +11,7 @@ use super::quantity::significant;
 use super::sizes::Size;
 use super::sizing::Sizing;
 use super::unknown;
-use super::written::{Entry, Given, Line, Reader, Worded, Written};
+use super::written::{AirfoilText, Entry, Given, Line, Reader, Worded, Written};
 use super::{AirfoilSource, ConstructionLine, IncidenceAt, Outline, Panel, Setting, Sides, Spec, StepForm};
 
 /// Largest thickness of the trailing edge, as a part of the smallest chord \[-\].
@@ -22,9 +22,11 @@ const QUARTER: f64 = 0.25;
 const FACET_TOLERANCE: f64 = 0.05;
 
 /// Where an airfoil's text was typed, with it.
-pub(super) fn airfoil_source(given: &Given<String>) -> AirfoilSource {
+pub(super) fn airfoil_source(given: &Given<AirfoilText>) -> AirfoilSource {
     AirfoilSource {
-        text: given.value.clone(),
+        text: given.value.text.clone(),
+        form: given.value.form,
+        changes: given.value.changes,
         place: given.place.clone(),
     }
 }
@@ -133,6 +135,7 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
     let root_chord = sizes.and_then(|sizes| sizes.get(Size::RootChord));
     faults.extend(thick_trailing_edge(written, root_chord, panels.as_deref()));
     faults.extend(sharp_in_proportion(written));
+    faults.extend(closing_of_nothing(written));
     let span = sizes.and_then(|sizes| sizes.get(Size::Span));
     let body = fuselage::body(&written.body, span, plane, faults);
     let outline = written.planform.outline.or_default();
@@ -183,6 +186,7 @@ pub(super) fn resolve(written: &Written, root: &Node, name: String, reader: &mut
             for_cruise: incidence == Worded::Word,
         },
         trailing_edge: written.trailing_edge.thickness.given().map(|given| given.value),
+        sharp_by: written.trailing_edge.closing.or_default(),
         facet_tolerance: written.facets.tolerance.or(FACET_TOLERANCE),
         sides,
         step: StepForm {
@@ -273,6 +277,20 @@ fn sharp_in_proportion(written: &Written) -> Option<Fault> {
         sharp.place.short()
     );
     Some(at(proportion, problem, "Delete one of the two.".to_owned()))
+}
+
+/// The fault of a way to close a trailing edge that is not sharp.
+fn closing_of_nothing(written: &Written) -> Option<Fault> {
+    let edge = &written.trailing_edge;
+    let closing = edge.closing.given()?;
+    let sharp = edge.thickness.is_unreadable() || edge.thickness.given().is_some_and(|t| t.value == 0.0);
+    (!sharp).then(|| {
+        at(
+            closing,
+            "says how a formula is closed to a sharp edge, and the edge is not sharp".to_owned(),
+            "Add thickness = 0 to [trailing_edge], or delete the line.".to_owned(),
+        )
+    })
 }
 
 /// The fault of a tip with two sections.

@@ -2,9 +2,9 @@
 
 use super::document::{Node, Value};
 use super::fault::{Fault, excerpt};
-use super::keys::{self, Table};
+use super::keys::{self, Kind, Table};
 use super::quantity::all_of;
-use super::written::TABLES;
+use super::written::{CHANGED, TABLES};
 
 /// A fault for every key and table of the document that is not known, naming the nearest that is.
 pub(super) fn unknown_keys(root: &Node) -> Vec<Fault> {
@@ -51,6 +51,11 @@ fn check_table(node: &Node, table: &Table, faults: &mut Vec<Fault>) {
                 .iter()
                 .filter(|(name, _)| keys::key(table, name).is_none());
             faults.extend(unknown.map(|(name, node)| fault(node, table, name)));
+            for (name, node) in members {
+                if keys::key(table, name).is_some_and(|key| matches!(key.kind, Kind::Airfoil)) {
+                    faults.extend(unknown_changes(node));
+                }
+            }
         }
         // the reader reports a list in the place of a table
         Value::List(items) if table.many => {
@@ -62,12 +67,29 @@ fn check_table(node: &Node, table: &Table, faults: &mut Vec<Fault>) {
     }
 }
 
-fn fault(node: &Node, table: &Table, name: &str) -> Fault {
-    let what = if matches!(node.value, Value::Table(_)) {
-        "table"
-    } else {
-        "key"
+/// Faults of unknown keys of a table in the place of an airfoil's text.
+fn unknown_changes(node: &Node) -> Vec<Fault> {
+    let Value::Table(members) = &node.value else {
+        return Vec::new();
     };
+    let unknown = members
+        .iter()
+        .filter(|(name, _)| keys::key(&CHANGED, name).is_none());
+    unknown
+        .map(|(name, node)| {
+            let remedy = keys::nearest_change(name).map_or_else(
+                || {
+                    let names: Vec<_> = CHANGED.keys.iter().map(|key| key.name).collect();
+                    format!("The keys of an airfoil are {}.", all_of(&names))
+                },
+                |near| format!("The nearest known is {near}."),
+            );
+            unknown_key(node, remedy)
+        })
+        .collect()
+}
+
+fn fault(node: &Node, table: &Table, name: &str) -> Fault {
     let remedy = match keys::nearest(table.name, name) {
         Some(near) => format!("The nearest known is {near}."),
         None if table.name.is_empty() => {
@@ -85,6 +107,15 @@ fn fault(node: &Node, table: &Table, name: &str) -> Fault {
             let names: Vec<_> = table.keys.iter().map(|key| key.name).collect();
             format!("The keys of {} are {}.", table.name, all_of(&names))
         }
+    };
+    unknown_key(node, remedy)
+}
+
+fn unknown_key(node: &Node, remedy: String) -> Fault {
+    let what = if matches!(node.value, Value::Table(_)) {
+        "table"
+    } else {
+        "key"
     };
     // a table's text is its header, which says no more than its key
     let text = if what == "table" {

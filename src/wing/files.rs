@@ -2,6 +2,7 @@
 
 use super::{Error, Wing};
 use crate::mesh::Mesh;
+use crate::spec::AirfoilSource;
 use crate::spec::{StepReference, StepSchema};
 use crate::write::step::{Attribute, Document, Properties, ReferenceForm, Schema, Value};
 use crate::write::{step, stl};
@@ -140,7 +141,7 @@ impl Wing {
         ];
         let airfoils =
             std::iter::once(&self.spec.root_airfoil).chain(self.spec.panels.iter().map(|p| &p.airfoil));
-        let mut texts: Vec<&str> = airfoils.map(|airfoil| airfoil.text.as_str()).collect();
+        let mut texts: Vec<String> = airfoils.map(AirfoilSource::name).collect();
         texts.dedup();
         let sections = Value::Text(in_ascii(&texts.join(", ")));
         attributes.push(attribute("sections from root to tip", sections));

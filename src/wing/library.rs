@@ -17,19 +17,16 @@ const MOST: usize = 256;
 /// once, so a file that changes while the library lives is not seen.
 pub struct Library<F> {
     pub(super) open: F,
-    sections: Mutex<HashMap<Key<String>, Arc<Loaded>>>,
-    fits: Mutex<HashMap<Key<Vec<String>>, Arc<Profiles>>>,
+    sections: Mutex<HashMap<String, Arc<Loaded>>>,
+    fits: Mutex<HashMap<Vec<String>, Arc<Profiles>>>,
 }
-
-/// Text or texts of sections, and whether their trailing edges are closed.
-type Key<T> = (T, bool);
 
 /// A section with what was found in its file.
 #[derive(Clone, Debug)]
 pub(super) struct Loaded {
     pub(super) section: Section,
     /// What was found and done in the coordinate file.
-    pub(super) note: Option<String>,
+    pub(super) notes: Vec<String>,
     /// The bytes of the coordinate file; none for a designation.
     pub(super) bytes: Option<Vec<u8>>,
 }
@@ -44,24 +41,22 @@ impl<F: Fn(&str) -> io::Result<Vec<u8>>> Library<F> {
         }
     }
 
-    /// A section that is kept, or the one that `load` gives.
+    /// A section that is kept under a key that tells it from every other, or the one that `load` gives.
     pub(super) fn section<E>(
         &self,
-        text: &str,
-        sharp: bool,
+        key: String,
         load: impl FnOnce() -> Result<Loaded, E>,
     ) -> Result<Arc<Loaded>, E> {
-        kept(&self.sections, (text.to_owned(), sharp), load)
+        kept(&self.sections, key, load)
     }
 
-    /// The fit of some sections, named by their texts.
+    /// The fit of some sections, named by their keys.
     pub(super) fn fit(
         &self,
-        texts: Vec<String>,
-        sharp: bool,
+        keys: Vec<String>,
         sections: &[Section],
     ) -> Result<Arc<Profiles>, airfoil::Error> {
-        kept(&self.fits, (texts, sharp), || {
+        kept(&self.fits, keys, || {
             airfoil::fit(&sections.iter().collect::<Vec<_>>(), airfoil::TOLERANCE)
         })
     }

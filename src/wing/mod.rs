@@ -10,7 +10,9 @@ mod library;
 mod notes;
 mod prepare;
 mod record;
+mod section;
 mod shape;
+mod source;
 #[cfg(test)]
 mod tests;
 
@@ -18,7 +20,9 @@ pub use contents::Contents;
 pub use files::{Kind, Options};
 pub use library::Library;
 pub use prepare::{Prepared, prepare, prepare_with};
+pub use section::{section_drawing, section_record};
 pub use shape::Wing;
+pub use source::{LoadedSection, Refused, SectionAsk};
 
 use thiserror::Error;
 

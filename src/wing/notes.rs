@@ -1,7 +1,7 @@
 //! Cautions and guidance, each with its ground.
 
 use super::Prepared;
-use crate::airfoil::{self, Profiles};
+use crate::airfoil::Profiles;
 use crate::loft::{LEAST_BASE, Loft};
 use crate::planform::{Planform, SpanLaw};
 use crate::spec::Sides;
@@ -22,15 +22,14 @@ pub(super) fn notes(
     ];
     let base = |k: usize| (loft.sections[k].upper_tail() - loft.sections[k].lower_tail()).norm();
     let last = loft.sections.len() - 1;
-    let formula = prepared
-        .sections
-        .iter()
-        .any(|section| airfoil::is_designation(&section.name));
     notes.push(match spec.trailing_edge {
-        Some(0.0) if formula => {
-            "Trailing edge sharp: NACA sections with the last thickness coefficient -0.1036 in place \
-            of -0.1015; coordinates closed by a wedge in proportion to x."
-                .to_owned()
+        Some(0.0)
+            if prepared
+                .sections
+                .iter()
+                .all(|section| section.formula().is_some()) =>
+        {
+            "Trailing edge sharp.".to_owned()
         }
         Some(0.0) => "Trailing edge sharp: coordinates closed by a wedge in proportion to x.".to_owned(),
         _ if !loft.blunt => "Trailing edge sharp, as the sections define it.".to_owned(),
@@ -47,6 +46,7 @@ pub(super) fn notes(
             )
         }
     });
+    notes.extend(closings(prepared));
     if loft.opened {
         notes.push(format!(
             "Some sections are sharp and others blunt: the sharp ones were opened to {LEAST_BASE} mm, because CAD readers \
@@ -88,4 +88,25 @@ pub(super) fn notes(
     notes.extend(spec.notes.iter().cloned());
     notes.extend(prepared.notes.iter().cloned());
     notes
+}
+
+/// How the formulas are closed: three ways are in use, and they give three different sections.
+fn closings(prepared: &Prepared) -> Option<String> {
+    let mut parts: Vec<(String, Vec<&str>)> = Vec::new();
+    for section in prepared
+        .sections
+        .iter()
+        .filter(|section| section.formula().is_some())
+    {
+        let how = section.closing_note();
+        match parts.iter_mut().find(|(known, _)| *known == how) {
+            Some((_, names)) => names.push(&section.name),
+            None => parts.push((how, vec![&section.name])),
+        }
+    }
+    let parts: Vec<String> = parts
+        .iter()
+        .map(|(how, names)| format!("{}: {how}", names.join(", ")))
+        .collect();
+    (!parts.is_empty()).then(|| format!("Sections by formula: {}.", parts.join("; ")))
 }

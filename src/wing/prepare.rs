@@ -6,8 +6,9 @@ use std::sync::Arc;
 use sha2::{Digest, Sha256};
 
 use super::library::{Library, Loaded};
-use crate::airfoil::{self, Closing, Profiles, Section, coordinates};
-use crate::spec::{self, AirfoilSource, Fault, Source, Spec, sort_faults};
+use super::source::{Refused, SectionAsk};
+use crate::airfoil::{Changes, Closing, Profiles, Section};
+use crate::spec::{self, AirfoilSource, Fault, SharpBy, Source, Spec, sort_faults};
 
 /// A spec with its sections, ready to be built.
 #[derive(Clone, Debug)]
@@ -57,26 +58,33 @@ pub fn prepare_with<F: Fn(&str) -> io::Result<Vec<u8>>>(
 ) -> Result<Prepared, Vec<Fault>> {
     let reading = spec::read(source);
     let mut faults = reading.faults;
-    let sharp = reading
-        .spec
-        .as_ref()
-        .is_some_and(|spec| spec.trailing_edge == Some(0.0));
+    let closing = closing(reading.spec.as_ref());
     let mut hash = Sha256::new();
     hash_part(&mut hash, reading.identity.as_bytes());
-    let (mut texts, mut sections, mut notes) = (Vec::<String>::new(), Vec::new(), Vec::new());
+    let (mut keys, mut sections, mut notes) = (Vec::<String>::new(), Vec::new(), Vec::<String>::new());
     for airfoil in &reading.airfoils {
-        if texts.contains(&airfoil.text) {
+        let key = key(airfoil, closing);
+        if keys.contains(&key) {
             continue;
         }
-        texts.push(airfoil.text.clone());
-        match library.section(&airfoil.text, sharp, || load(airfoil, sharp, &library.open)) {
+        keys.push(key.clone());
+        match library.section(key, || load(airfoil, closing, &library.open)) {
             Ok(loaded) => {
                 if let Some(bytes) = &loaded.bytes {
                     hash_part(&mut hash, airfoil.text.as_bytes());
                     hash_part(&mut hash, bytes);
                 }
                 sections.push(loaded.section.clone());
-                notes.extend(loaded.note.clone());
+                // a file that is taken twice, with different changes, is described once
+                for note in loaded
+                    .notes
+                    .iter()
+                    .filter(|note| !notes.contains(note))
+                    .cloned()
+                    .collect::<Vec<_>>()
+                {
+                    notes.push(note);
+                }
             }
             Err(fault) => faults.push(*fault),
         }
@@ -86,12 +94,12 @@ pub fn prepare_with<F: Fn(&str) -> io::Result<Vec<u8>>>(
         return Err(faults);
     }
     let spec = reading.spec.expect("a reading without faults has a spec");
-    let find = |airfoil: &AirfoilSource| texts.iter().position(|text| *text == airfoil.text);
+    let find = |airfoil: &AirfoilSource| keys.iter().position(|known| *known == key(airfoil, closing));
     let chosen = (std::iter::once(&spec.root_airfoil).chain(spec.panels.iter().map(|panel| &panel.airfoil)))
         .map(|airfoil| find(airfoil).expect("a reading names every airfoil of its spec"))
         .collect();
     // a fit that fails is tried again, and its failure reported, where the wing is built
-    let fitted = library.fit(texts, sharp, &sections).ok();
+    let fitted = library.fit(keys, &sections).ok();
     Ok(Prepared {
         spec,
         sections,
@@ -110,61 +118,61 @@ fn hash_part(hash: &mut Sha256, part: &[u8]) {
     hash.update(part);
 }
 
+/// The closing that a sharp trailing edge asks of formulas.
+fn closing(spec: Option<&Spec>) -> Option<Closing> {
+    let sharp = spec.filter(|spec| spec.trailing_edge == Some(0.0))?;
+    Some(match sharp.sharp_by {
+        SharpBy::Coefficient => Closing::Coefficient,
+        SharpBy::Extension => Closing::Extension,
+    })
+}
+
+/// What a section is known by: the same for the same section, whatever wing it is in.
+fn key(airfoil: &AirfoilSource, closing: Option<Closing>) -> String {
+    format!(
+        "{:?} {:?} {closing:?} {}",
+        airfoil.form, airfoil.changes, airfoil.text
+    )
+}
+
 fn load(
     airfoil: &AirfoilSource,
-    sharp: bool,
+    closing: Option<Closing>,
     open: &dyn Fn(&str) -> io::Result<Vec<u8>>,
 ) -> Result<Loaded, Box<Fault>> {
     let text = airfoil.text.as_str();
-    let fault = |problem: String, remedy: String| {
+    let changes = &airfoil.changes;
+    let ask = SectionAsk {
+        text,
+        form: airfoil.form,
+        changes: Changes {
+            thickness: changes.thickness,
+            camber: changes.camber,
+            inverted: changes.inverted,
+            closing,
+        },
+        fairing: changes.fairing,
+    };
+    let loaded = ask.load(open).map_err(|refused| {
+        let beside = if matches!(refused, Refused::Unread(_)) {
+            " relative to the spec file"
+        } else {
+            ""
+        };
         Box::new(Fault {
             place: airfoil.place.clone(),
             text: format!("\"{text}\""),
-            problem,
-            remedy,
+            problem: refused.to_string(),
+            remedy: format!("{}{beside}", refused.remedy()),
         })
-    };
-    if airfoil::is_designation(text) {
-        let mut formula = airfoil::parse(text).map_err(|unknown| fault(unknown.reason, unknown.remedy))?;
-        if sharp {
-            formula.thickness.closing = Closing::Coefficient;
-        }
-        let section =
-            Section::from_formula(text, formula).map_err(|e| fault(e.to_string(), String::new()))?;
-        return Ok(Loaded {
-            section,
-            note: None,
-            bytes: None,
-        });
-    }
-    let bytes = open(text).map_err(|e| {
-        fault(
-            format!("the coordinate file cannot be read: {e}"),
-            "give a designation such as \"NACA 2412\", or the path of a coordinate file relative to the spec file".into(),
-        )
     })?;
-    let contour = coordinates::read(&bytes, text).map_err(|e| {
-        let place = if e.line() > 0 {
-            format!(":{}", e.line())
-        } else {
-            String::new()
-        };
-        let typed = if e.text().is_empty() {
-            String::new()
-        } else {
-            format!(" (`{}`)", e.text().trim())
-        };
-        fault(
-            format!("{text}{place}{typed}: {}", e.reason()),
-            e.remedy().to_owned(),
-        )
-    })?;
-    let section = Section::from_contour(text, &contour).map_err(|e| fault(e.to_string(), String::new()))?;
-    let note = (!contour.notes.is_empty())
-        .then(|| format!("{text}: {}.", contour.notes.join("; ").trim_end_matches('.')));
+    let said = [(text, &loaded.notes), (&loaded.section.name, &loaded.shape_notes)];
     Ok(Loaded {
-        section,
-        note,
-        bytes: Some(bytes),
+        notes: (said.into_iter())
+            .filter(|(_, of_it)| !of_it.is_empty())
+            .map(|(name, of_it)| format!("{name}: {}", of_it.join(" ")))
+            .collect(),
+        section: loaded.section,
+        bytes: loaded.bytes,
     })
 }

@@ -31,7 +31,12 @@ fn prepared(draft: &Draft) -> Prepared {
     text += &format!("[airfoil]\nroot = \"{}\"\n", draft.airfoils[0]);
     if let Some(edge) = draft.edge {
         // within what the smallest chord allows
-        let chord = draft.panels.iter().fold((draft.root, draft.root), |(c, least), panel| (c * panel.1, least.min(c * panel.1)));
+        let chord = draft
+            .panels
+            .iter()
+            .fold((draft.root, draft.root), |(c, least), panel| {
+                (c * panel.1, least.min(c * panel.1))
+            });
         let edge = edge.min(0.09 * chord.1);
         text += &format!("[trailing_edge]\nthickness = {edge}\n");
     }

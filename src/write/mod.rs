@@ -1,6 +1,7 @@
 //! Writers: a value in, bytes out. They know no flags, paths, terminals or clocks.
 
 pub mod record;
+pub mod section_record;
 mod section_svg;
 pub mod sheet;
 pub mod step;

@@ -184,7 +184,7 @@ pub(super) fn figure(value: f64) -> String {
 }
 
 /// Two significant digits with an exponent, for deviations.
-fn small(value: f64) -> String {
+pub(super) fn small(value: f64) -> String {
     if value == 0.0 {
         "0".into()
     } else {
@@ -193,7 +193,7 @@ fn small(value: f64) -> String {
 }
 
 /// Breaks a text into lines of at most `width` characters, further lines indented.
-fn folded(text: &str, width: usize, indent: &str) -> String {
+pub(super) fn folded(text: &str, width: usize, indent: &str) -> String {
     let mut out = String::new();
     let mut column = 0;
     for word in text.split_whitespace() {

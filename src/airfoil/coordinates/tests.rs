@@ -1,6 +1,5 @@
 //! Each layout and each irregularity, one by one.
 
-
 use crate::airfoil::coordinates::forms::{Form, Layout, PLAIN, Style, file, stations};
 use crate::airfoil::coordinates::{Contour, read, write_blocks, write_loop};
 

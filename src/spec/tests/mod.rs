@@ -1,6 +1,7 @@
 //! Specs as a user types them, read from beginning to end.
 
 mod accepted;
+mod airfoils;
 mod contradictions;
 mod faults;
 mod identity;

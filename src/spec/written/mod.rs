@@ -20,7 +20,7 @@ mod top;
 mod trailing_edge;
 mod values;
 
-pub(super) use airfoil::Airfoil;
+pub(super) use airfoil::{Airfoil, CHANGED, Source as AirfoilText};
 pub(super) use body::Body;
 pub(super) use build::Build;
 pub(super) use cruise::Cruise;

@@ -1,6 +1,6 @@
 //! `[[panel]]`: one panel between two stations, root outwards.
 
-use super::{Entry, Section};
+use super::{AirfoilText, Entry, Section};
 use crate::spec::Place;
 use crate::spec::keys::{Key, Range, Table};
 use crate::spec::quantity::Dimension::{Angle, Length, Ratio};
@@ -15,7 +15,7 @@ pub(super) const TABLE: Table = Table {
         Key::detail("sweep_at", Ratio, Range::FRACTION),
         Key::size("dihedral", Angle, Range::DIHEDRAL),
         Key::size("twist", Angle, Range::TURN),
-        Key::text("airfoil"),
+        Key::airfoil("airfoil"),
     ],
 };
 
@@ -29,7 +29,7 @@ pub(in crate::spec) struct Panel {
     pub(in crate::spec) sweep_at: Entry<f64>,
     pub(in crate::spec) dihedral: Entry<f64>,
     pub(in crate::spec) twist: Entry<f64>,
-    pub(in crate::spec) airfoil: Entry<String>,
+    pub(in crate::spec) airfoil: Entry<AirfoilText>,
 }
 
 impl Panel {
@@ -42,7 +42,7 @@ impl Panel {
             sweep_at: section.number("sweep_at"),
             dihedral: section.number("dihedral"),
             twist: section.number("twist"),
-            airfoil: section.text("airfoil"),
+            airfoil: section.airfoil("airfoil"),
         }
     }
 }

@@ -250,11 +250,14 @@ impl<'a> Section<'a> {
 
     /// The text under a key: not empty, at most 10,000 characters, none of them a control character.
     pub(super) fn text(&mut self, key: &str) -> Entry<String> {
-        const LONGEST: usize = 10_000;
         self.known(key);
-        let Some(node) = self.member(key) else {
-            return Entry::Absent;
-        };
+        self.member(key)
+            .map_or(Entry::Absent, |node| self.text_of(node, key))
+    }
+
+    /// The text that a node holds, which stands under a key.
+    pub(super) fn text_of(&mut self, node: &Node, key: &str) -> Entry<String> {
+        const LONGEST: usize = 10_000;
         let Value::Text(text) = &node.value else {
             let remedy = format!("Write it in double quotes: {key} = \"…\".");
             return self.wrong(node, "a text is expected".to_owned(), remedy);
@@ -304,6 +307,15 @@ impl<'a> Section<'a> {
             "not one of the words that this key knows".to_owned(),
             format!("Write {allowed}."),
         )
+    }
+
+    /// A table in the place of a value, to be read with its own list of keys.
+    pub(super) fn within<'b>(&'b mut self, node: &'b Node, table: &'static Table) -> Section<'b> {
+        Section {
+            reader: self.reader,
+            node: Some(node),
+            table,
+        }
     }
 
     pub(super) fn known(&self, key: &str) -> &'static keys::Key {

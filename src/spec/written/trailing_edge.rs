@@ -1,6 +1,7 @@
 //! `[trailing_edge]`: how thick the trailing edge is built.
 
 use super::{Entry, Section};
+use crate::spec::SharpBy;
 use crate::spec::keys::{Key, Range, Table};
 use crate::spec::quantity::Dimension::{Length, Ratio};
 
@@ -10,6 +11,7 @@ pub(super) const TABLE: Table = Table {
     keys: &[
         Key::detail("thickness", Length, Range::THICKNESS),
         Key::detail("proportion", Ratio, Range::PROPORTION),
+        Key::choice("closing", &["coefficient", "extension"]),
     ],
 };
 
@@ -18,6 +20,7 @@ pub(super) const TABLE: Table = Table {
 pub(in crate::spec) struct TrailingEdge {
     pub(in crate::spec) thickness: Entry<f64>,
     pub(in crate::spec) proportion: Entry<f64>,
+    pub(in crate::spec) closing: Entry<SharpBy>,
 }
 
 impl TrailingEdge {
@@ -25,6 +28,11 @@ impl TrailingEdge {
         Self {
             thickness: section.number("thickness"),
             proportion: section.number("proportion"),
+            closing: section.choice("closing", |word| match word {
+                "coefficient" => Some(SharpBy::Coefficient),
+                "extension" => Some(SharpBy::Extension),
+                _ => None,
+            }),
         }
     }
 }
