@@ -1,6 +1,6 @@
 //! Wings sized by what they carry, from the spec to the figures and the proof sheet; what contradicts is refused.
 
-use crate::figures::{assert_relative, loft};
+use crate::figures::{assert_near, assert_relative, loft};
 use crate::refusal::{assert_refused, assert_says, refused, sound_but};
 use crate::workdir::WorkDir;
 
@@ -62,6 +62,48 @@ fn the_sheet_shows_the_chain_and_what_a_limit_costs() {
     directory.write("wing.toml", sound_but(&[]));
     let ran = directory.run(&["loft", "wing.toml", "-o", "out"]);
     assert!(!ran.stdout.contains("Sizing"), "{}", ran.stdout);
+}
+
+#[test]
+fn twist_counts_in_the_incidence_for_cruise() {
+    // straight elements, taper 0.45, tip -2.5°: c θ runs linearly, so its mean is λ ε / (1 + λ) = -0.77586°, and the section at
+    // the mean chord (η = 0.436782) has η λ ε / (1 - (1 - λ) η) = -0.64675°: the wing's zero-lift angle is the sections',
+    // -2.07724° for NACA 2412 by thin-aerofoil theory (computed), + 0.12911° (small angles: within 2e-4 of it)
+    // C_L = 60.80123 / (0.5 · 1.225 · 20² · 0.72382417) = 0.342857; a by Helmbold, A = 8: 8π / (sqrt(17) + 1)
+    let spec = sized("aspect_ratio = 8\nsweep_at = 0.5\n[setting]\nincidence = \"cruise\"\ntwist = -2.5\n[cruise]\nspeed = 20")
+        .replace("taper_ratio = 0.5", "taper_ratio = 0.45");
+    let figures = loft(&WorkDir::new(), &spec);
+    let step = |name: &str| {
+        let steps = figures.list("sizing");
+        let step = steps.iter().find(|step| step.text("name") == name);
+        step.unwrap_or_else(|| panic!("no {name}")).number("value")
+    };
+    let zero_lift = -2.077_24 + 0.129_11;
+    assert_near(
+        "zero lift",
+        step("zero-lift angle at the mean aerodynamic chord"),
+        zero_lift,
+        2e-4,
+    );
+    let slope = 8.0 * std::f64::consts::PI / (17_f64.sqrt() + 1.0);
+    let incidence = (0.342_857_143 / slope).to_degrees() + zero_lift;
+    assert_near(
+        "incidence",
+        step("incidence at the mean aerodynamic chord"),
+        incidence,
+        2e-4,
+    );
+    // the built section has it: measured back from the solid
+    let checks = figures.list("checks");
+    let measured = checks
+        .iter()
+        .find(|check| check.text("quantity") == "incidence at the mean aerodynamic chord");
+    assert_near(
+        "measured",
+        measured.expect("a check").number("built"),
+        incidence,
+        3e-4,
+    );
 }
 
 #[test]

@@ -156,6 +156,8 @@ impl Planform {
             .filter(|_| spec.setting.for_cruise)
         {
             let area = 2.0 * integrals.area;
+            // the strips are cut out of the twisted wing; how it is turned as a whole makes no difference
+            planform.turn(0.0);
             let result = planform.for_cruise(load.weight, cruise, area, place, zero_lift)?;
             planform.incidence = result.incidence;
             planform.chain = result.chain;
