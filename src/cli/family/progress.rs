@@ -39,7 +39,7 @@ impl Progress {
         } else if io::stderr().is_terminal() {
             let bar = ProgressBar::with_draw_target(Some(total as u64), ProgressDrawTarget::stderr());
             let style =
-                ProgressStyle::with_template("{bar:40} {pos} of {len} wings, {per_sec}, {eta} left");
+                ProgressStyle::with_template("{bar:40} {pos} of {len} wings, {per_sec:0}, {eta} left");
             if let Ok(style) = style {
                 bar.set_style(style);
             }
