@@ -125,13 +125,20 @@ fn spline(
     let mut covered = [0.0; 4];
     let mut turns = 0.0;
     for (way, forward) in uses {
-        let fit = sides
-            .iter()
-            .enumerate()
+        // the side that the ends fit best is nearly always the one
+        let first = (0..sides.len())
+            .min_by(|&a, &b| ends_off(way, &sides[a]).total_cmp(&ends_off(way, &sides[b])))?;
+        let likely = Fit {
+            side: first,
+            ..fit(way, &sides[first], tolerance)
+        };
+        let all = (sides.iter().enumerate()).filter(|_| likely.off > tolerance);
+        let fit = all
             .map(|(side, curve)| Fit {
                 side,
                 ..fit(way, curve, tolerance)
             })
+            .chain([likely])
             .min_by(|a, b| a.off.total_cmp(&b.off))?;
         if fit.off > tolerance {
             let off = surface_distance(surface, way).min(fit.off);
@@ -185,6 +192,14 @@ struct Fit {
     to: f64,
 }
 
+/// How far the ends of an edge are from those of a side, whichever way round fits better.
+fn ends_off(way: &Way, side: &Curve) -> f64 {
+    let [a, b] = [0.0, 1.0].map(|t| way.at(t).0);
+    let [c, d] = [0.0, 1.0].map(|t| side.at(side.knots.at_fraction(t)).0);
+    let off = |p: Point3<f64>, q: Point3<f64>| (p - c).norm().max((q - d).norm());
+    off(a, b).min(off(b, a))
+}
+
 /// Compares an edge with a side: at equal fractions first, forwards or backwards, then by the nearest points.
 fn fit(way: &Way, side: &Curve, tolerance: f64) -> Fit {
     let samples = way.samples();
@@ -196,7 +211,12 @@ fn fit(way: &Way, side: &Curve, tolerance: f64) -> Fit {
             .map(|&t| (way.at(t).0 - place(other(t))).norm())
             .fold(0.0, f64::max)
     };
-    let (ahead, back) = (apart(false), apart(true));
+    let ahead = apart(false);
+    let back = if ahead <= tolerance {
+        f64::INFINITY
+    } else {
+        apart(true)
+    };
     let equal = Fit {
         side: 0,
         off: ahead.min(back),

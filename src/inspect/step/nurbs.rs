@@ -94,11 +94,13 @@ impl Knots {
         let knots = &self.values;
         let last = knots.len() - p - 2;
         let span = p + knots[p + 1..=last].partition_point(|&knot| knot <= t);
-        let mut lower = vec![1.0];
+        let mut values = Vec::with_capacity(p + 1);
+        values.push(1.0);
         for level in 1..p {
-            lower = raise(knots, span, level, t, &lower);
+            raise(knots, span, level, t, &mut values);
         }
-        let values = raise(knots, span, p, t, &lower);
+        let lower = values.clone();
+        raise(knots, span, p, t, &mut values);
         // slope of N(i,p): p (N(i,p-1) / (t(i+p) - t(i)) - N(i+1,p-1) / (t(i+p+1) - t(i+1)))
         let part = |k: usize| part_at(&lower, knots, span, p, k);
         let slope = |i: usize| (if i > 0 { part(i - 1) } else { 0.0 }) - (if i < p { part(i) } else { 0.0 });
@@ -113,18 +115,18 @@ fn part_at(lower: &[f64], knots: &[f64], span: usize, p: usize, k: usize) -> f64
     lower[k] * p as f64 / (knots[first + p] - knots[first])
 }
 
-/// Functions of degree `level` from those of `level - 1`.
-fn raise(knots: &[f64], span: usize, level: usize, t: f64, lower: &[f64]) -> Vec<f64> {
-    let mut values = vec![0.0; level + 1];
-    for (k, value) in lower.iter().enumerate() {
+/// Functions of degree `level` from those of `level - 1`, in place.
+fn raise(knots: &[f64], span: usize, level: usize, t: f64, values: &mut Vec<f64>) {
+    values.push(0.0);
+    // from the last, so that each is read before it is written over
+    for k in (0..level).rev() {
         // support of this function of degree level - 1 begins at its first knot
         let first = span + k + 1 - level;
-        let width = knots[first + level] - knots[first];
-        let share = (t - knots[first]) / width;
+        let share = (t - knots[first]) / (knots[first + level] - knots[first]);
+        let value = values[k];
         values[k + 1] += share * value;
-        values[k] += (1.0 - share) * value;
+        values[k] = (1.0 - share) * value;
     }
-    values
 }
 
 /// A point and its weight in homogeneous coordinates.
