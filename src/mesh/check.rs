@@ -17,6 +17,8 @@ pub enum Finding {
     InsideOut,
     /// Two corners are equal in the file's 32-bit numbers.
     EqualCorners(u32, u32),
+    /// Facets as fine as asked for cannot be said in 32-bit numbers, or are too many.
+    TooFine,
 }
 
 impl fmt::Display for Finding {
@@ -25,6 +27,7 @@ impl fmt::Display for Finding {
             Self::OpenEdge(a, b) => write!(f, "the edge between corners {a} and {b} is open"),
             Self::NoArea(k) => write!(f, "facet {k} has no area"),
             Self::InsideOut => write!(f, "the facets face inwards"),
+            Self::TooFine => write!(f, "no facets within the tolerance were found"),
             Self::EqualCorners(a, b) => write!(f, "corners {a} and {b} are equal in 32-bit numbers"),
         }
     }

@@ -1,132 +1,69 @@
-//! How closely a wing's faces must be divided: chordwise by curvature, spanwise by twist.
+//! How closely a skin must be divided: lines along the span (u constant) by curvature, points along them by warp.
 //!
-//! Between two neighbouring grid lines at a distance Δu (Δv) a facet misses the surface by about
+//! An edge between two points of the surface that lie Δu and Δv apart misses it, to second order, by
 //!
 //! ```text
-//! |S_uu · n| Δu² / 8 + |S_uv · n| Δu Δv / 4
+//! | S_uu·n Δu² + 2 S_uv·n Δu Δv | / 8
 //! ```
 //!
-//! (n the surface normal; the second term is the warp of a ruled surface across a cell's diagonal). For given spanwise
-//! divisions this settles Δu everywhere; of all spanwise divisions those with the fewest cells are taken.
+//! (n the surface normal; straight elements have no S_vv). On one of a cell's two diagonals the terms have opposite
+//! signs and cancel, so with that diagonal a cell may be as wide as its chord's own curvature allows, Δu² = 8 t / S_uu,
+//! and as long as Δv = 8 t / (S_uv Δu) for a tolerance t. A surface that is ruled is nowhere curved like a ball, so a
+//! facet is nowhere farther from it than along its edges.
+//!
+//! For each place along the chord the numbers of points are taken that make the fewest facets. All numbers belong to one
+//! row in which each divides the next, so that lines with few points and lines with many fit together.
 
-use nalgebra::Vector3;
+use super::bending::{Bend, Bending, PROBES};
 
-use crate::loft::Loft;
-use crate::spline::{Knots, Surface};
+/// Rows of numbers of divisions along the span, each dividing the next.
+pub(super) const FAMILIES: [[u32; 11]; 4] = [
+    [1, 2, 4, 8, 16, 32, 64, 128, 256, 512, 1024],
+    [1, 3, 6, 12, 24, 48, 96, 192, 384, 768, 1536],
+    [1, 2, 6, 12, 24, 48, 96, 192, 384, 768, 1536],
+    [1, 5, 10, 20, 40, 80, 160, 320, 640, 1280, 2560],
+];
 
-/// Chordwise parameters, shared by all faces, and spanwise divisions of each panel.
-#[derive(Clone, Debug, PartialEq)]
-pub(super) struct Grid {
-    /// From 0 to 1.
-    pub(super) chordwise: Vec<f64>,
-    /// Divisions of each panel, at least 1.
-    pub(super) spanwise: Vec<u32>,
+/// How many lines a skin needs at each place along the chord, and how many points they need in each panel.
+#[derive(Clone, Debug)]
+pub(super) struct Density {
+    /// Lines per unit of u, per probe.
+    pub(super) lines: Vec<f64>,
+    /// Divisions of the lines, `[probe][panel]`.
+    pub(super) divisions: Vec<Vec<u32>>,
 }
 
-/// Places where the surface is probed, and how much it bends there.
-pub(super) struct Bending {
-    /// Parameter of each probe, the middle of one of `PROBES` equal intervals.
-    probes: Vec<f64>,
-    /// Per panel and probe: largest |S_uu·n| and |S_uv·n| over both skins \[mm\].
-    panels: Vec<Vec<(f64, f64)>>,
-}
+/// Least number of intervals along the chord of a skin.
+const LEAST_LINES: f64 = 4.0;
 
-const PROBES: u32 = 128;
-/// Most spanwise divisions of a panel that are considered.
-const MOST_DIVISIONS: u32 = 400;
-
-impl Bending {
-    /// Probes both skins of every panel at its two ends.
-    pub(super) fn of(loft: &Loft) -> Self {
-        // probes crowd at the nose, where curvature changes fastest
-        let probes: Vec<f64> = (0..PROBES)
-            .map(|i| (f64::from(i) + 0.5) / f64::from(PROBES))
-            .collect();
-        let panels = (0..loft.panels())
-            .map(|k| {
-                let mut most = vec![(0.0_f64, 0.0_f64); probes.len()];
-                for skin in [loft.upper(k), loft.lower(k)] {
-                    for (value, u) in most.iter_mut().zip(&probes) {
-                        let (bend, warp) = bend_and_warp(&skin, *u);
-                        value.0 = value.0.max(bend);
-                        value.1 = value.1.max(warp);
-                    }
-                }
-                most
-            })
-            .collect();
-        Self { probes, panels }
+impl Density {
+    /// The density with the fewest facets within `tolerance` \[mm\], with `caps` plane faces at the ends.
+    pub(super) fn of(bending: &Bending, family: &[u32], tolerance: f64, caps: f64) -> Self {
+        let (lines, divisions) = (0..PROBES)
+            .map(|probe| cheapest(bending, probe, family, tolerance, caps))
+            .unzip();
+        Self { lines, divisions }
     }
 
-    /// The grid with the fewest cells that this estimate allows for a tolerance \[mm\].
-    pub(super) fn grid(&self, tolerance: f64) -> Grid {
-        let warps: Vec<f64> = self
-            .panels
-            .iter()
-            .map(|panel| panel.iter().map(|(_, warp)| *warp).fold(0.0, f64::max))
-            .collect();
-        let greatest = warps.iter().copied().fold(0.0, f64::max);
-        let divisions = |most: u32| -> Vec<u32> {
-            let share = |warp: f64| {
-                if greatest > 0.0 {
-                    warp / greatest * f64::from(most)
-                } else {
-                    0.0
-                }
-            };
-            warps
-                .iter()
-                .map(|warp| whole(share(*warp).ceil().max(1.0)))
-                .collect()
-        };
-        let mut best: Option<(f64, Vec<u32>)> = None;
-        let mut most = 1;
-        while most <= MOST_DIVISIONS {
-            let spanwise = divisions(most);
-            let count = self.lines(&spanwise, tolerance).ceil().max(2.0);
-            let cells = count * spanwise.iter().copied().map(f64::from).sum::<f64>() + count;
-            match &best {
-                Some((least, _)) if cells > 1.5 * least => break,
-                Some((least, _)) if cells >= *least => {}
-                _ => best = Some((cells, spanwise)),
-            }
-            most = (most + 1).max(most * 5 / 4);
-        }
-        let spanwise = best.map_or_else(|| divisions(1), |(_, spanwise)| spanwise);
-        let chordwise = self.place_lines(&spanwise, tolerance);
-        Grid { chordwise, spanwise }
-    }
-
-    /// 1/Δu at a probe.
-    fn density(&self, probe: usize, spanwise: &[u32], tolerance: f64) -> f64 {
-        (self.panels.iter().zip(spanwise))
-            .map(|(panel, n)| {
-                let (bend, warp) = panel[probe];
-                let (a, b) = (bend / 8.0, warp / (4.0 * f64::from(*n)));
-                // a Δu² + b Δu = tolerance
-                (b + (b * b + 4.0 * a * tolerance).sqrt()) / (2.0 * tolerance)
-            })
-            .fold(1.0, f64::max)
-    }
-
-    fn lines(&self, spanwise: &[u32], tolerance: f64) -> f64 {
-        let sum: f64 = (0..self.probes.len())
-            .map(|i| self.density(i, spanwise, tolerance))
+    /// About how many facets it leads to.
+    pub(super) fn cost(&self, caps: f64) -> f64 {
+        let per_probe = self.lines.iter().zip(&self.divisions);
+        let sum: f64 = per_probe
+            .map(|(lines, divisions)| lines * (caps + 2.0 * f64::from(divisions.iter().sum::<u32>())))
             .sum();
-        sum / f64::from(PROBES)
+        sum / PROBES as f64
     }
 
-    /// Grid lines so that each interval takes the same share of the summed density.
-    fn place_lines(&self, spanwise: &[u32], tolerance: f64) -> Vec<f64> {
-        let count = self.lines(spanwise, tolerance).ceil().max(2.0);
-        let total = self.lines(spanwise, tolerance) * f64::from(PROBES);
+    /// Lines so that each interval takes the same share of the summed density; from 0 to 1.
+    pub(super) fn place(&self) -> Vec<f64> {
+        let total: f64 = self.lines.iter().sum();
+        let count = (total / PROBES as f64).ceil().max(LEAST_LINES);
         let mut lines = vec![0.0];
         let (mut sum, mut wanted) = (0.0, 1.0);
-        for i in 0..self.probes.len() {
-            let density = self.density(i, spanwise, tolerance);
+        for (i, density) in self.lines.iter().enumerate() {
             while wanted < count && wanted / count * total <= sum + density {
                 let inside = (wanted / count * total - sum) / density;
-                lines.push(((i as f64) + inside) / f64::from(PROBES));
+                lines.push(((i as f64) + inside.clamp(0.0, 1.0)) / PROBES as f64);
                 wanted += 1.0;
             }
             sum += density;
@@ -134,45 +71,98 @@ impl Bending {
         lines.push(1.0);
         lines
     }
+
+    /// Divisions that were chosen for a panel between two parameters: the most of the probes there.
+    pub(super) fn divisions(&self, from: f64, to: f64, panel: usize) -> u32 {
+        probes(from, to)
+            .map(|probe| self.divisions[probe][panel])
+            .max()
+            .unwrap_or(1)
+    }
+
+    /// Makes intervals narrower or wider, so that those that miss the surface by `deviations` miss it by `aim` \[mm\].
+    pub(super) fn correct(&mut self, lines: &[f64], deviations: &[f64], aim: f64) {
+        let mut corrected = vec![0.0_f64; PROBES];
+        for (pair, deviation) in lines.windows(2).zip(deviations) {
+            // the miss grows with the square of the width, or in proportion to it where warp prevails
+            let ratio = deviation / aim;
+            let factor = ratio.powf(if ratio > 1.0 { 0.7 } else { 0.5 }).clamp(0.6, 1.6);
+            let density = factor / (pair[1] - pair[0]);
+            for probe in probes(pair[0], pair[1]) {
+                corrected[probe] = corrected[probe].max(density);
+            }
+        }
+        // every probe lies in an interval, or is the nearest to one
+        self.lines = corrected;
+    }
 }
 
-/// A small whole number given as a float.
+/// The probes between two parameters, or the one that is nearest.
 #[expect(
     clippy::cast_possible_truncation,
     clippy::cast_sign_loss,
-    reason = "the value lies between 1 and 400"
+    reason = "a parameter lies between 0 and 1"
 )]
-fn whole(value: f64) -> u32 {
-    value.clamp(1.0, f64::from(MOST_DIVISIONS)) as u32
+fn probes(from: f64, to: f64) -> std::ops::Range<usize> {
+    let [first, end] = [from, to].map(|u| (u * PROBES as f64 - 0.5).ceil().max(0.0) as usize);
+    if first < end {
+        return first..end.min(PROBES);
+    }
+    let nearest = ((0.5 * (from + to) * PROBES as f64) as usize).min(PROBES - 1);
+    nearest..nearest + 1
 }
 
-/// |S_uu·n| at the worse end and |S_uv·n| of a ruled surface at u.
-fn bend_and_warp(surface: &Surface, u: f64) -> (f64, f64) {
-    let rows: Vec<[Vector3<f64>; 3]> = surface
-        .rows
-        .iter()
-        .map(|row| derivatives(&surface.u, row, u))
-        .collect();
-    let (first, last) = (&rows[0], &rows[rows.len() - 1]);
-    let across = last[0] - first[0];
-    let warp = last[1] - first[1];
-    let mut most = (0.0_f64, 0.0_f64);
-    for end in [first, last] {
-        let normal = end[1].cross(&across);
-        let length = normal.norm();
-        if length > 0.0 {
-            most.0 = most.0.max((end[2].dot(&normal) / length).abs());
-            most.1 = most.1.max((warp.dot(&normal) / length).abs());
+/// Lines per unit of u, and divisions of each panel, that make the fewest facets at a probe.
+fn cheapest(bending: &Bending, probe: usize, family: &[u32], tolerance: f64, caps: f64) -> (f64, Vec<u32>) {
+    let panels = bending.panels.len();
+    // no panel can do with fewer lines than its chord's curvature asks for
+    let floor = (0..panels)
+        .map(|k| (bending.panels[k][probe].most / (8.0 * tolerance)).sqrt())
+        .fold(1.0, f64::max);
+    let lines_at = |panel: usize, level: usize| {
+        let bend = bending.panels[panel][probe];
+        needed(bend, bend.warp / f64::from(family[level]), tolerance)
+    };
+    let cost = |lines: f64, levels: &[usize]| {
+        let points: u32 = levels.iter().map(|level| family[*level]).sum();
+        lines * (caps + 2.0 * f64::from(points))
+    };
+    let mut levels = vec![0_usize; panels];
+    let mut each: Vec<f64> = (0..panels).map(|k| lines_at(k, 0)).collect();
+    let mut lines = each.iter().copied().fold(floor, f64::max);
+    let mut best = (cost(lines, &levels), lines, levels.clone());
+    while lines > floor {
+        // the panels that ask for the most lines get more points
+        let mut raised = false;
+        for k in 0..panels {
+            if each[k] >= lines && levels[k] + 1 < family.len() {
+                levels[k] += 1;
+                each[k] = lines_at(k, levels[k]);
+                raised = true;
+            }
+        }
+        if !raised {
+            break;
+        }
+        lines = each.iter().copied().fold(floor, f64::max);
+        let found = cost(lines, &levels);
+        if found < best.0 {
+            best.0 = found;
+            best.1 = lines;
+            best.2.copy_from_slice(&levels);
         }
     }
-    most
+    (best.1, best.2.iter().map(|level| family[*level]).collect())
 }
 
-fn derivatives(knots: &Knots, points: &[nalgebra::Point3<f64>], u: f64) -> [Vector3<f64>; 3] {
-    let d = knots.derivatives(u);
-    d.rows.map(|row| {
-        (0..=knots.degree()).fold(Vector3::zeros(), |sum, i| {
-            sum + points[d.first + i].coords * row[i]
-        })
-    })
+/// 1/Δu that keeps chords and the better diagonals of a panel within a tolerance; `warp` is that of one division.
+fn needed(bend: Bend, warp: f64, tolerance: f64) -> f64 {
+    let by_chord = (bend.most / (8.0 * tolerance)).sqrt();
+    // the diagonal: warp Δu / 4 - bend Δu² / 8 <= tolerance, up to the lesser root where there are two
+    let (a, b) = (bend.middle / 8.0, warp / 4.0);
+    let discriminant = b * b - 4.0 * a * tolerance;
+    if discriminant <= 0.0 || b <= 0.0 {
+        return by_chord;
+    }
+    by_chord.max((b + discriminant.sqrt()) / (2.0 * tolerance))
 }

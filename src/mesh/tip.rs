@@ -17,45 +17,51 @@ const SHARE: f64 = 0.6;
 /// Most facets across a tip.
 const MOST: u32 = 200;
 
-/// Adds the facets of a round tip between the upper and the lower side of the tip section, and of the half disc behind it
-/// where the trailing edge is blunt. Lines across the tip start at the upper side's parameters.
-pub(super) fn round_tip(
-    mesh: &mut Mesh,
-    tip: &RoundTip,
-    upper: Side<'_>,
-    lower: Side<'_>,
-    port: bool,
-    tolerance: f64,
-) {
-    let rows = (1..MOST)
-        .find(|n| sagitta(tip.reach, *n) <= SHARE * tolerance)
-        .unwrap_or(MOST)
-        .max(2);
-    let last = upper.corners.len() - 1;
-    let blunt = upper.corners[last] != lower.corners[lower.corners.len() - 1];
-    let mut builder = Builder { mesh, tip, port };
-    let mut before: Vec<u32> = upper.corners.to_vec();
-    let mut rear = vec![before[last]];
-    for j in 1..rows {
-        let v = [j - 1, j].map(|j| f64::from(j) / f64::from(rows));
-        let mut row = vec![before[0]];
-        row.extend((1..last).map(|i| builder.corner(upper.parameters[i], v[1])));
-        row.push(if blunt {
-            builder.corner(1.0, v[1])
-        } else {
-            before[last]
-        });
-        builder.strip((upper.parameters, &before), (upper.parameters, &row), v);
-        rear.push(row[last]);
-        before = row;
-    }
-    let v = [rows - 1, rows].map(|j| f64::from(j) / f64::from(rows));
-    builder.strip((upper.parameters, &before), (lower.parameters, lower.corners), v);
-    if blunt {
-        // from the upper edge down the base to the lower one, then up along the arc
-        rear.push(lower.corners[lower.corners.len() - 1]);
-        for pair in rear[1..].windows(2).rev() {
-            builder.facet([rear[0], pair[1], pair[0]]);
+/// A round tip and how it is to be divided.
+#[derive(Clone, Copy)]
+pub(super) struct Frame<'a> {
+    pub(super) tip: &'a RoundTip,
+    pub(super) port: bool,
+    /// Unit of the 32-bit numbers that corners are rounded to \[mm\].
+    pub(super) unit: f64,
+    /// Largest distance of a facet from the surface that is aimed at \[mm\].
+    pub(super) tolerance: f64,
+}
+
+impl Frame<'_> {
+    /// Adds the facets between the upper and the lower side of the tip section, and of the half disc behind it where the
+    /// trailing edge is blunt. Lines across the tip start at the upper side's parameters.
+    pub(super) fn facets(self, mesh: &mut Mesh, [upper, lower]: [Side<'_>; 2]) {
+        let rows = (1..MOST)
+            .find(|n| sagitta(self.tip.reach, *n) <= SHARE * self.tolerance)
+            .unwrap_or(MOST)
+            .max(2);
+        let last = upper.corners.len() - 1;
+        let blunt = upper.corners[last] != lower.corners[lower.corners.len() - 1];
+        let mut builder = Builder { mesh, frame: self };
+        let mut before: Vec<u32> = upper.corners.to_vec();
+        let mut rear = vec![before[last]];
+        for j in 1..rows {
+            let v = [j - 1, j].map(|j| f64::from(j) / f64::from(rows));
+            let mut row = vec![before[0]];
+            row.extend((1..last).map(|i| builder.corner(upper.parameters[i], v[1])));
+            row.push(if blunt {
+                builder.corner(1.0, v[1])
+            } else {
+                before[last]
+            });
+            builder.strip((upper.parameters, &before), (upper.parameters, &row), v);
+            rear.push(row[last]);
+            before = row;
+        }
+        let v = [rows - 1, rows].map(|j| f64::from(j) / f64::from(rows));
+        builder.strip((upper.parameters, &before), (lower.parameters, lower.corners), v);
+        if blunt {
+            // from the upper edge down the base to the lower one, then up along the arc
+            rear.push(lower.corners[lower.corners.len() - 1]);
+            for pair in rear[1..].windows(2).rev() {
+                builder.facet([rear[0], pair[1], pair[0]]);
+            }
         }
     }
 }
@@ -68,22 +74,19 @@ fn sagitta(r: f64, n: u32) -> f64 {
 
 struct Builder<'a> {
     mesh: &'a mut Mesh,
-    tip: &'a RoundTip,
-    port: bool,
+    frame: Frame<'a>,
 }
 
 impl Builder<'_> {
     fn corner(&mut self, u: f64, v: f64) -> u32 {
-        let number = u32::try_from(self.mesh.corners.len()).expect("a mesh has fewer than 2^32 corners");
-        self.mesh.corners.push(self.tip.surface.at(u, v));
-        number
+        self.mesh.add(&self.frame.tip.surface.at(u, v), self.frame.unit)
     }
 
     /// A facet given counter-clockwise for the starboard side.
     fn facet(&mut self, [a, b, c]: [u32; 3]) {
         self.mesh
             .facets
-            .push(if self.port { [a, c, b] } else { [a, b, c] });
+            .push(if self.frame.port { [a, c, b] } else { [a, b, c] });
     }
 
     /// Facets between two lines of constant v, each with its own chordwise parameters: always on to the nearer next corner.
@@ -131,7 +134,7 @@ impl Builder<'_> {
             let mix = |pick: fn(&(u32, f64, f64)) -> f64| -> f64 {
                 facet.iter().zip(shares).map(|(p, s)| pick(p) * s).sum()
             };
-            let point: Point3<f64> = self.tip.surface.at(mix(|p| p.1), mix(|p| p.2));
+            let point: Point3<f64> = self.frame.tip.surface.at(mix(|p| p.1), mix(|p| p.2));
             self.mesh.deviation = self.mesh.deviation.max((point - a).dot(&normal).abs() / length);
         }
     }

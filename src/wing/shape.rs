@@ -102,11 +102,9 @@ impl Wing {
         let figures: Vec<Figures> = groups.iter().map(|(_, lofts)| measure::figures(lofts)).collect();
         let meshes: Vec<Mesh> = groups
             .iter()
-            .map(|(_, lofts)| facets(lofts, spec.facet_tolerance))
-            .collect();
-        for mesh in &meshes {
-            mesh::check(mesh, spec.unit.millimetres()).map_err(Error::Mesh)?;
-        }
+            .map(|(_, lofts)| facets(lofts, spec.facet_tolerance, spec.unit.millimetres()))
+            .collect::<Result<_, _>>()
+            .map_err(Error::Mesh)?;
         let side = if spec.sides == Sides::Port {
             &port
         } else {
@@ -147,9 +145,9 @@ impl Wing {
 }
 
 /// Facets of a loft, or of two that meet; where they are curved along the span, of straight elements close to them.
-fn facets(lofts: &[&Loft], tolerance: f64) -> Mesh {
+fn facets(lofts: &[&Loft], tolerance: f64, unit: f64) -> Result<Mesh, mesh::Finding> {
     if lofts[0].strips.iter().all(|strip| strip.knots.degree() == 1) {
-        return mesh::build(lofts, tolerance);
+        return mesh::build(lofts, &mesh::Limits { tolerance }, unit);
     }
     let straight: Vec<(Loft, f64)> = lofts
         .iter()
@@ -157,9 +155,12 @@ fn facets(lofts: &[&Loft], tolerance: f64) -> Mesh {
         .collect();
     let off = straight.iter().map(|(_, off)| *off).fold(0.0, f64::max);
     let lofts: Vec<&Loft> = straight.iter().map(|(loft, _)| loft).collect();
-    let mut mesh = mesh::build(&lofts, tolerance - off);
+    let limits = mesh::Limits {
+        tolerance: tolerance - off,
+    };
+    let mut mesh = mesh::build(&lofts, &limits, unit)?;
     mesh.deviation += off;
-    mesh
+    Ok(mesh)
 }
 
 /// Zero-lift angle of each of the spec's own stations \[rad\], by thin-aerofoil theory; zeros where nothing asks for it.
