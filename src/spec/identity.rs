@@ -21,6 +21,10 @@ fn put(node: &Node, path: &str, lines: &mut String) {
             format!("{path}.{name}")
         }
     };
+    // the text that `--set` gave changes to
+    if let Some(plain) = &node.plain {
+        put(plain, path, lines);
+    }
     match &node.value {
         Value::Table(members) => members
             .iter()
