@@ -174,6 +174,10 @@ impl Loft {
     /// # Errors
     ///
     /// [`Error::TooThick`] where a panel's sections cross each other.
+    ///
+    /// # Panics
+    ///
+    /// Where a smooth law has no control rows, which none has.
     pub fn new(
         planform: &Planform,
         profiles: &Profiles,

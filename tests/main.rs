@@ -22,7 +22,7 @@ mod layers; // each module imports only from those before it
 mod own_sections; // the coordinate files are what their headers say
 mod readme; // the README shows the program's real output
 mod same_bytes; // same input, same bytes
+mod section;
 mod sized; // wings sized by what they carry
 mod step_edits; // single edits of a STEP file are found or harmless; what is no STEP file is refused
-mod step_forms; // every unit, side, schema and form of reference geometry, read by Open CASCADE and by inspect
-mod section; // `section`, and sections with changes in a wing
+mod step_forms; // every unit, side, schema and form of reference geometry, read by Open CASCADE and by inspect // `section`, and sections with changes in a wing

@@ -32,7 +32,8 @@ impl Interpolation {
     pub fn new(parameters: &[f64], ends: Ends) -> Option<Self> {
         let n = parameters.len();
         let ascending = parameters.windows(2).all(|pair| pair[1] - pair[0] > 1e-12);
-        if n < 2 || !ascending || parameters[0] != 0.0 || parameters[n - 1] != 1.0 {
+        let unit = n >= 2 && parameters[0].abs() < 1e-15 && (parameters[n - 1] - 1.0).abs() < 1e-15;
+        if !ascending || !unit {
             return None;
         }
         let inner = match (ends, n) {
@@ -136,7 +137,7 @@ pub fn part_from(knots: &Knots, points: &[Point3<f64>], t: f64) -> Option<(Knots
     }
     let p = knots.degree();
     let (mut values, mut points) = (knots.values().to_vec(), points.to_vec());
-    let present = values.iter().filter(|knot| **knot == t).count();
+    let present = values.iter().filter(|knot| is(**knot, t)).count();
     for _ in present..p {
         // Boehm's knot insertion
         let span = values.partition_point(|knot| *knot <= t) - 1;
@@ -157,11 +158,16 @@ pub fn part_from(knots: &Knots, points: &[Point3<f64>], t: f64) -> Option<(Knots
         values.insert(span + 1, t);
         points = next;
     }
-    let first = values.iter().position(|knot| *knot == t)?;
+    let first = values.iter().position(|knot| is(*knot, t))?;
     let interior: Vec<f64> = values[first + p..values.len() - p - 1].to_vec();
     let knots = Knots::clamped(p, t, end, &interior)?;
     let control = points.split_off(points.len() - knots.count());
     Some((knots, control))
+}
+
+/// The same number to the last bit, as knots that are copies of each other are.
+fn is(a: f64, b: f64) -> bool {
+    a.total_cmp(&b).is_eq()
 }
 
 #[cfg(test)]

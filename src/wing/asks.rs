@@ -1,7 +1,7 @@
 //! What is asked of the solid, beside what is found on it.
 
 use crate::measure::{Ask, Quantity, Slices};
-use crate::planform::{ChordLine, Planform};
+use crate::planform::{ChordLine, Planform, SpanLaw};
 use crate::spec::{IncidenceAt, Outline, Sides, Spec};
 
 /// Lengths may deviate by this share of the span, areas by this share of themselves.
@@ -59,8 +59,8 @@ impl Asks {
     fn whole(&mut self, spec: &Spec, planform: &Planform, slices: &Slices, sides: f64) {
         let (found, expected) = (slices.planform(), planform.expected());
         let reference = 0.5 * planform.wing.area;
-        let whole = planform.start == 0.0 && matches!(planform.law, crate::planform::SpanLaw::Straight)
-            || spec.outline == Outline::Ellipse && planform.start == 0.0;
+        let straight = matches!(planform.law, SpanLaw::Straight);
+        let whole = planform.start == 0.0 && (straight || spec.outline == Outline::Ellipse);
         let asked = if whole { reference } else { expected.area };
         let mut name = if planform.start > 0.0 {
             "exposed area"
