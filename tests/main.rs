@@ -11,6 +11,7 @@ mod workdir; // a directory of its own for a run of the program
 // subjects
 mod bad_files; // missing, malformed and unwritable files, wrong usage: nothing is left behind
 mod bad_spec; // faults of a spec: what is said about them
+mod drawing; // the dimensioned drawing: labels apart, figures as in the JSON, hostile names
 mod examples; // every example, as programs see it that know nothing of this one
 mod family; // families of wings: tables, files and figures that belong together
 mod family_outside; // a mixed family read back from outside; the examples of families, run
@@ -21,6 +22,7 @@ mod known_answers; // closed forms and published wings
 mod layers; // each module imports only from those before it
 mod own_sections; // the coordinate files are what their headers say
 mod readme; // the README shows the program's real output
+mod report; // the report page: whole, self-contained, names are text
 mod same_bytes; // same input, same bytes
 mod section;
 mod sized; // wings sized by what they carry

@@ -36,7 +36,10 @@ pub(super) fn run(options: &LoftOptions, output: &Output) -> Result<bool, Failur
         .map_or_else(|| "wing".into(), |stem| stem.to_string_lossy());
     let kinds: Vec<Kind> = Kind::ALL
         .into_iter()
-        .filter(|kind| options.only.is_empty() || options.only.contains(kind))
+        .filter(|kind| match options.only.as_slice() {
+            [] => Kind::USUAL.contains(kind),
+            only => only.contains(kind),
+        })
         .collect();
     let named = Options {
         time_stamp: &stamp,

@@ -1,9 +1,7 @@
 //! The time stamp of files: never the clock's.
 
 use super::failure::Failure;
-
-/// The stamp of files where SOURCE_DATE_EPOCH is not set.
-const FIXED: &str = "2025-01-01T00:00:00";
+use crate::wing::Options;
 
 /// SOURCE_DATE_EPOCH (seconds since 1970, the convention of reproducible builds) as ISO 8601 in UTC, else a fixed date.
 ///
@@ -12,7 +10,7 @@ const FIXED: &str = "2025-01-01T00:00:00";
 /// [`Failure::Epoch`] where the variable is set to something else.
 pub(super) fn time_stamp() -> Result<String, Failure> {
     match std::env::var_os("SOURCE_DATE_EPOCH") {
-        None => Ok(FIXED.to_owned()),
+        None => Ok(Options::UNDATED.to_owned()),
         Some(value) => {
             let text = value.to_string_lossy().into_owned();
             let seconds = text

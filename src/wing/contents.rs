@@ -33,6 +33,8 @@ impl Wing {
                 Kind::Step => vec![self.step(options)?],
                 Kind::Stl => self.stl(),
                 Kind::Json => vec![record::json(&record).into_bytes()],
+                Kind::Drawing => vec![self.drawing(options.date())],
+                Kind::Report => vec![self.report(options.date())],
             };
             files.extend(names.into_iter().map(|(_, name)| name).zip(contents));
         }

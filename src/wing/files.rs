@@ -19,18 +19,36 @@ pub enum Kind {
     Stl,
     /// The figures.
     Json,
+    /// The dimensioned drawing.
+    Drawing,
+    /// The report page.
+    Report,
 }
 
 impl Kind {
     /// All kinds, in the order they are written.
-    pub const ALL: [Self; 3] = [Self::Step, Self::Stl, Self::Json];
+    pub const ALL: [Self; 5] = [Self::Step, Self::Stl, Self::Json, Self::Drawing, Self::Report];
 
-    /// Its name on the command line and in the figures; also the ending of its file's name.
+    /// The kinds that are written where none are named.
+    pub const USUAL: [Self; 3] = [Self::Step, Self::Stl, Self::Json];
+
+    /// Its name on the command line and in the figures.
     pub const fn name(self) -> &'static str {
         match self {
             Self::Step => "step",
             Self::Stl => "stl",
             Self::Json => "json",
+            Self::Drawing => "drawing",
+            Self::Report => "report",
+        }
+    }
+
+    /// Ending of its file's name.
+    pub const fn ending(self) -> &'static str {
+        match self {
+            Self::Drawing => "svg",
+            Self::Report => "html",
+            _ => self.name(),
         }
     }
 }
@@ -42,6 +60,17 @@ pub struct Options<'a> {
     pub time_stamp: &'a str,
     /// Identifier of the part: the stem of the files' names.
     pub id: &'a str,
+}
+
+impl<'a> Options<'a> {
+    /// The stamp of files that no date was given for.
+    pub const UNDATED: &'static str = "2025-01-01T00:00:00";
+
+    /// The date that people read on drawing and report: none where none was given.
+    pub fn date(&self) -> Option<&'a str> {
+        let (date, _) = self.time_stamp.split_once('T')?;
+        (self.time_stamp != Self::UNDATED).then_some(date)
+    }
 }
 
 impl Wing {
@@ -103,14 +132,14 @@ impl Wing {
 
     /// Names of the files of a kind, each with its key in the figures: one, or an STL file for each solid of a pair.
     pub fn names(&self, kind: Kind, stem: &str) -> Vec<(String, String)> {
-        let ending = kind.name();
+        let (name, ending) = (kind.name(), kind.ending());
         if kind == Kind::Stl && self.solids.len() == 2 {
             return vec![
-                (ending.to_owned(), format!("{stem}-starboard.{ending}")),
-                (format!("{ending}_port"), format!("{stem}-port.{ending}")),
+                (name.to_owned(), format!("{stem}-starboard.{ending}")),
+                (format!("{name}_port"), format!("{stem}-port.{ending}")),
             ];
         }
-        vec![(ending.to_owned(), format!("{stem}.{ending}"))]
+        vec![(name.to_owned(), format!("{stem}.{ending}"))]
     }
 
     /// Figures that go into the STEP file as attributes.

@@ -5,11 +5,14 @@
 
 mod asks;
 mod contents;
+mod cut;
+mod drawing;
 mod files;
 mod library;
 mod notes;
 mod prepare;
 mod record;
+mod report;
 mod section;
 mod shape;
 mod source;
@@ -17,6 +20,7 @@ mod source;
 mod tests;
 
 pub use contents::Contents;
+pub use cut::{Cut, Outside};
 pub use files::{Kind, Options};
 pub use library::Library;
 pub use prepare::{Prepared, prepare, prepare_with};

@@ -24,6 +24,9 @@ pub struct Wing {
     pub profiles: Profiles,
     /// Largest distance between a section as given and as built \[chord\].
     pub section_deviation: f64,
+    /// The exact faces of its starboard side with the reference root's leading edge at the origin, also where only the
+    /// port side is built or the wing is placed elsewhere.
+    pub loft: Loft,
     /// Its solids: one, or two for a pair.
     pub solids: Vec<Solid>,
     /// Figures of each solid, measured on the exact faces.
@@ -126,6 +129,7 @@ impl Wing {
             planform,
             profiles,
             section_deviation,
+            loft: at_origin,
             solids,
             figures,
             slices,
@@ -145,7 +149,7 @@ impl Wing {
 }
 
 /// Facets of a loft, or of two that meet; where they are curved along the span, of straight elements close to them.
-fn facets(lofts: &[&Loft], tolerance: f64, unit: f64) -> Result<Mesh, mesh::Finding> {
+pub(super) fn facets(lofts: &[&Loft], tolerance: f64, unit: f64) -> Result<Mesh, mesh::Finding> {
     if lofts[0].strips.iter().all(|strip| strip.knots.degree() == 1) {
         return mesh::build(lofts, &mesh::Limits { tolerance }, unit);
     }

@@ -169,7 +169,7 @@ fn table(rows: &[[String; 6]], out: &mut String) -> std::fmt::Result {
 }
 
 /// Seven significant digits, without trailing zeros.
-pub(super) fn figure(value: f64) -> String {
+pub(crate) fn figure(value: f64) -> String {
     if value.abs() < 5e-10 {
         return "0".into();
     }
@@ -184,7 +184,7 @@ pub(super) fn figure(value: f64) -> String {
 }
 
 /// Two significant digits with an exponent, for deviations.
-pub(super) fn small(value: f64) -> String {
+pub(crate) fn small(value: f64) -> String {
     if value == 0.0 {
         "0".into()
     } else {

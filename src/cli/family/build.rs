@@ -44,7 +44,10 @@ pub(super) fn run(spec: &Path, options: &FamilyOptions, output: &Output) -> Resu
     let directory = spec.parent().unwrap_or(Path::new(""));
     let kinds: Vec<Kind> = Kind::ALL
         .into_iter()
-        .filter(|kind| options.only.is_empty() || options.only.contains(kind))
+        .filter(|kind| match options.only.as_slice() {
+            [] => Kind::USUAL.contains(kind),
+            only => only.contains(kind),
+        })
         .collect();
     let family = Family {
         text,
