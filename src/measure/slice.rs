@@ -26,11 +26,7 @@ impl Chord {
     /// Turn against the x axis, leading edge up \[rad\].
     pub fn incidence(&self) -> f64 {
         let chord = self.rear - self.front;
-        chord
-            .y
-            .hypot(chord.z)
-            .copysign(-chord.dot(&self.up))
-            .atan2(chord.x)
+        (-chord.dot(&self.up)).atan2(chord.x)
     }
 
     /// Point at a chord fraction \[mm\].
@@ -150,6 +146,23 @@ impl Slices {
 
     /// The chord line at a panel's spanwise parameter.
     fn chord(&self, panel: usize, v: f64) -> Chord {
+        let [upper, _] = &self.skins[panel];
+        let here = self.raw_chord(panel, v);
+        let (from, to) = upper.v.range();
+        if upper.v.degree() > 1 {
+            return here;
+        }
+        // between sections that lean differently the section's direction turns from one to the other
+        let share = (v - from) / (to - from);
+        let up = self.raw_chord(panel, from).up * (1.0 - share) + self.raw_chord(panel, to).up * share;
+        Chord {
+            up: up.normalize(),
+            ..here
+        }
+    }
+
+    /// The same with the direction of thickness as the section's own points show it.
+    fn raw_chord(&self, panel: usize, v: f64) -> Chord {
         let [upper, lower] = &self.skins[panel];
         let rear = nalgebra::center(&upper.at(1.0, v), &lower.at(1.0, v));
         chord(upper.at(0.0, v), rear, upper.at(0.3, v))

@@ -44,14 +44,10 @@ impl ChordLine {
         (self.trailing_edge - self.leading_edge).normalize()
     }
 
-    /// Incidence: the angle between the chord line and the x axis, leading edge up \[rad\].
+    /// Incidence in the section's plane, leading edge up \[rad\].
     pub fn incidence(&self) -> f64 {
         let chord = self.trailing_edge - self.leading_edge;
-        chord
-            .y
-            .hypot(chord.z)
-            .copysign(-chord.dot(&self.up))
-            .atan2(chord.x)
+        (-chord.dot(&self.up)).atan2(chord.x)
     }
 
     /// Point at a chord fraction \[mm\].
