@@ -1,10 +1,10 @@
 //! From a loft to its facets.
 
-use nalgebra::Point3;
+use nalgebra::{Point3, Vector3};
 
 use super::bending::Bending;
 use super::caps::cap;
-use super::check::{Finding, check};
+use super::check::{Finding, check, single};
 use super::column::Column;
 use super::grid::Grid;
 use super::tip::{Frame, Side};
@@ -57,14 +57,16 @@ pub fn build(lofts: &[&Loft], limits: &Limits, unit: f64) -> Result<Mesh, Findin
 
 /// How far a corner moves when it is rounded to 32-bit numbers, at most \[mm\].
 fn rounding(loft: &Loft, unit: f64) -> f64 {
-    let corners = loft
-        .sections
-        .iter()
-        .flat_map(|s| [s.nose(), s.upper_tail(), s.lower_tail()]);
-    let parts = corners.flat_map(|p| p.coords.iter().copied().collect::<Vec<f64>>());
-    let most = parts.fold(0.0_f64, |most, part| most.max(part.abs())) / unit;
-    // half the distance between neighbours, in each of three directions
-    3.0_f64.sqrt() * 0.5 * f64::from(f32::EPSILON) * most * unit
+    let mut most = Vector3::<f64>::zeros();
+    for section in &loft.sections {
+        for point in [section.nose(), section.upper_tail(), section.lower_tail()] {
+            most = most.sup(&point.coords.abs());
+        }
+    }
+    let farthest = single(&Point3::from(most), unit);
+    // half the distance to the next number, in each direction
+    let halves = farthest.map(|c| 0.5 * (f64::from(c.next_up()) - f64::from(c)) * unit);
+    Vector3::from(halves).norm()
 }
 
 /// Thickness of the thinnest section where it is thickest, roughly \[mm\].

@@ -10,13 +10,21 @@ use crate::spline::{Knots, Surface};
 pub(super) struct Column {
     /// Ends of the two elements, `[element][inner, outer]`.
     ends: [[Point3<f64>; 2]; 2],
-    /// At a quarter, a half and three quarters of the way: point and slope on the inner and the outer row.
-    between: [[(Point3<f64>, Vector3<f64>); 2]; 3],
+    /// At a quarter, a half and three quarters of the way: the inner and the outer row.
+    between: [[Probe; 2]; 3],
 }
 
 /// By what edges' distances are taken larger than measured: for what lies between the places, and inside facets, where the
 /// surface bends a little even along straight elements.
 const MARGIN: f64 = 1.01;
+/// A point of a row of control points, with its first and second derivative along u \[mm\].
+#[derive(Clone, Copy, Debug)]
+struct Probe {
+    point: Vector3<f64>,
+    slope: Vector3<f64>,
+    bend: Vector3<f64>,
+}
+
 const QUARTERS: [f64; 3] = [0.25, 0.5, 0.75];
 
 impl Column {
@@ -27,7 +35,7 @@ impl Column {
             ends: [from, to].map(|u| rows.map(|row| point(&surface.u, row, u))),
             between: QUARTERS.map(|q| {
                 let u = from + q * (to - from);
-                rows.map(|row| point_and_slope(&surface.u, row, u))
+                rows.map(|row| Probe::at(&surface.u, row, u))
             }),
         }
     }
@@ -41,20 +49,14 @@ impl Column {
     /// Largest distance \[mm\] between the surface and an edge from `a`, at `va` on the first element, to `b`, at `vb` on
     /// the second.
     ///
-    /// The distance along the surface's normal is taken at three places and followed between them as t (1 - t) times a
-    /// parabola, which meets them and is zero at both ends; [`MARGIN`] covers what is still missed.
+    /// It is taken at three places and followed between them as t (1 - t) times a parabola, which meets them and is zero at
+    /// both ends; [`MARGIN`] covers what is still missed.
     pub(super) fn edge(&self, [va, vb]: [f64; 2], [a, b]: [Point3<f64>; 2]) -> f64 {
         let mut shape = [0.0; 3];
-        for ((q, probe), shape) in QUARTERS.iter().zip(&self.between).zip(&mut shape) {
+        for ((q, [inner, outer]), shape) in QUARTERS.iter().zip(&self.between).zip(&mut shape) {
             let v = va + q * (vb - va);
-            let across = probe[1].0 - probe[0].0;
-            let slope = probe[0].1 + (probe[1].1 - probe[0].1) * v;
-            let normal = slope.cross(&across);
-            let length = normal.norm();
-            if length > 0.0 {
-                let apart = (a + (b - a) * *q) - (probe[0].0 + across * v);
-                *shape = apart.dot(&normal) / (length * q * (1.0 - q));
-            }
+            let on_edge = a.coords.lerp(&b.coords, *q);
+            *shape = distance([inner, outer], v, &on_edge) / (q * (1.0 - q));
         }
         let [low, middle, high] = shape;
         let (slope, bend) = (2.0 * (high - low), 8.0 * (low - 2.0 * middle + high));
@@ -103,12 +105,47 @@ fn point(knots: &Knots, row: &[Point3<f64>], u: f64) -> Point3<f64> {
     (0..=knots.degree()).fold(Point3::origin(), |sum, i| sum + row[first + i].coords * basis[i])
 }
 
-fn point_and_slope(knots: &Knots, row: &[Point3<f64>], u: f64) -> (Point3<f64>, Vector3<f64>) {
-    let d = knots.derivatives(u);
-    let mut sums = [Vector3::zeros(); 2];
-    for i in 0..=knots.degree() {
-        sums[0] += row[d.first + i].coords * d.rows[0][i];
-        sums[1] += row[d.first + i].coords * d.rows[1][i];
+impl Probe {
+    fn at(knots: &Knots, row: &[Point3<f64>], u: f64) -> Self {
+        let d = knots.derivatives(u);
+        let mut sums = [Vector3::zeros(); 3];
+        for i in 0..=knots.degree() {
+            for (sum, derivative) in sums.iter_mut().zip(&d.rows) {
+                *sum += row[d.first + i].coords * derivative[i];
+            }
+        }
+        let [point, slope, bend] = sums;
+        Self { point, slope, bend }
     }
-    (Point3::from(sums[0]), sums[1])
+}
+
+/// Distance \[mm\] of a point from the surface between two rows, near its place at v; with the sign of the normal.
+///
+/// The point's place in the parameters is a first guess of the nearest place. For what the point lies off sideways,
+///
+/// ```text
+/// r = δu S_u + δv S_v + e n,
+/// ```
+///
+/// the surface has moved along its normal n by the time it is under the point, and the distance is
+///
+/// ```text
+/// e - (S_uu·n δu² + 2 S_uv·n δu δv) / 2.
+/// ```
+fn distance([inner, outer]: [&Probe; 2], v: f64, point: &Vector3<f64>) -> f64 {
+    let across = outer.point - inner.point;
+    let slope = inner.slope.lerp(&outer.slope, v);
+    let apart = point - inner.point.lerp(&outer.point, v);
+    let cross = slope.cross(&across);
+    let square = cross.norm_squared();
+    if square <= 0.0 {
+        return 0.0;
+    }
+    let normal = cross / square.sqrt();
+    // S_v x n and n x S_u over |S_u x S_v| are the dual directions of u and v
+    let along_u = apart.cross(&across).dot(&cross) / square;
+    let along_v = slope.cross(&apart).dot(&cross) / square;
+    let bend = inner.bend.lerp(&outer.bend, v).dot(&normal);
+    let warp = (outer.slope - inner.slope).dot(&normal);
+    apart.dot(&normal) - along_u * (0.5 * bend * along_u + warp * along_v)
 }
