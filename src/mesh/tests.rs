@@ -170,6 +170,20 @@ impl Target {
     }
 }
 
+/// Places on a facet: along its edges and inside.
+const SHARES: [[f64; 3]; 10] = [
+    [0.5, 0.5, 0.0],
+    [0.0, 0.5, 0.5],
+    [0.5, 0.0, 0.5],
+    [0.4, 0.6, 0.0],
+    [0.6, 0.4, 0.0],
+    [0.0, 0.4, 0.6],
+    [0.0, 0.6, 0.4],
+    [0.4, 0.0, 0.6],
+    [0.6, 0.0, 0.4],
+    [0.3, 0.3, 0.4],
+];
+
 /// Largest distance of points on some facets from the surface \[mm\].
 fn measured(mesh: &Mesh, loft: &Loft, facets: usize) -> f64 {
     let faces = (0..loft.panels()).flat_map(|k| [Some(loft.upper(k)), Some(loft.lower(k)), loft.base(k)]);
@@ -178,7 +192,7 @@ fn measured(mesh: &Mesh, loft: &Loft, facets: usize) -> f64 {
     let corner = |k: u32| mesh.corners[k as usize];
     let mut worst = 0.0_f64;
     for [a, b, c] in mesh.facets.iter().step_by(stride).map(|facet| facet.map(corner)) {
-        for [p, q, r] in [[0.5, 0.5, 0.0], [0.0, 0.5, 0.5], [0.5, 0.0, 0.5], [0.3, 0.3, 0.4]] {
+        for [p, q, r] in SHARES {
             let point = Point3::from(a.coords * p + b.coords * q + c.coords * r);
             // facets of a cap lie in the plane of the section and inside the wing
             let on_cap = |y: f64| {
@@ -217,6 +231,36 @@ proptest! {
             let found = measured(&mesh, &starboard, 60);
             prop_assert!(found <= draft.tolerance, "{found} of {}", draft.tolerance);
         }
+    }
+}
+
+#[test]
+fn no_point_of_a_tapered_twisted_wing_is_farther_off_than_is_said() {
+    // taper makes points of equal parameter slide along each other: their distance is not that of the surfaces
+    for tolerance in [1.0, 0.2, 0.05] {
+        let draft = Draft {
+            reach: 1000.0,
+            slender: 0.3,
+            taper: [0.5, 1.0],
+            sweep: 2.0,
+            dihedral: 0.0,
+            twist: [-3.0, 0.0],
+            airfoils: ["NACA 2412", "NACA 2412"],
+            blunt: false,
+            round: false,
+            joined: false,
+            panels: 1,
+            tolerance,
+        };
+        let loft = loft(&draft);
+        let mesh = build(&[&loft], &Limits { tolerance }, 1.0).unwrap();
+        let found = measured(&mesh, &loft, usize::MAX);
+        assert!(
+            found <= mesh.deviation && mesh.deviation <= tolerance,
+            "{found}, {}",
+            mesh.deviation
+        );
+        assert!(found > 0.5 * tolerance, "{found} of {tolerance}");
     }
 }
 
