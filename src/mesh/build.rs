@@ -12,9 +12,9 @@ use super::{Limits, Mesh};
 use crate::loft::{Loft, RoundTip};
 
 /// Times that a grid is made finer before a mesh is given up.
-const MOST_TRIALS: u32 = 24;
+const MOST_TRIALS: usize = 24;
 /// Trials after which both skins get the same lines, which no thin trailing edge can make cross.
-const APART: u32 = 6;
+const APART: usize = 6;
 /// Facets beyond which a mesh is given up.
 const MOST_FACETS: usize = 50_000_000;
 
@@ -34,9 +34,16 @@ pub fn build(lofts: &[&Loft], limits: &Limits, unit: f64) -> Result<Mesh, Findin
     let bendings = [false, true].map(|lower| Bending::of(loft, lower));
     let caps = if lofts.len() > 1 { 1.0 } else { 2.0 };
     // facets coarser than the section is thick would go through the other skin
-    let mut aim = limits.tolerance.min(thickness(loft) / 8.0);
+    // the finest aim first; where its corners fall together in 32-bit numbers, as on a tip far out and very thin, coarser ones
+    let thin = thickness(loft);
+    let aims = [8.0, 2.0, 0.5].map(|share| limits.tolerance.min(thin / share));
+    let mut aim = aims[0];
     let mut found = Finding::TooFine;
-    for trial in 0..MOST_TRIALS {
+    for trial in 0..3 * MOST_TRIALS {
+        if trial % MOST_TRIALS == 0 {
+            aim = aims[trial / MOST_TRIALS];
+        }
+        let trial = trial % MOST_TRIALS;
         let grid = Grid::of(loft, &bendings, aim, caps, trial >= APART);
         if grid.facets() > MOST_FACETS {
             break;

@@ -1,8 +1,8 @@
 //! Sections of random digits.
 
 use crate::airfoil::{Error, Section, TOLERANCE, coordinates, fit, is_designation, parse};
-use proptest::test_runner::RngSeed;
 use proptest::prelude::{ProptestConfig, Strategy, prop, prop_assert, proptest};
+use proptest::test_runner::RngSeed;
 
 fn four() -> impl Strategy<Value = String> {
     let camber = (1..=7_u32, 1..=7_u32).prop_map(|(m, p)| format!("{m}{p}"));
