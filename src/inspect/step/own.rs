@@ -5,20 +5,7 @@ use super::access::{Read, args, finding};
 use super::report::{AttributeValue, StepReport};
 use crate::inspect::Finding;
 use crate::inspect::part21::{Entry, Exchange, Value};
-
-/// Entities that nothing has to refer to.
-const ROOTS: [&str; 10] = [
-    "APPLICATION_PROTOCOL_DEFINITION",
-    "CONSTRUCTIVE_GEOMETRY_REPRESENTATION_RELATIONSHIP",
-    "CONTEXT_DEPENDENT_SHAPE_REPRESENTATION",
-    "GENERAL_PROPERTY_ASSOCIATION",
-    "MECHANICAL_DESIGN_GEOMETRIC_PRESENTATION_REPRESENTATION",
-    "PRESENTATION_LAYER_ASSIGNMENT",
-    "PRODUCT_RELATED_PRODUCT_CATEGORY",
-    "PROPERTY_DEFINITION_REPRESENTATION",
-    "SHAPE_DEFINITION_REPRESENTATION",
-    "SHAPE_REPRESENTATION_RELATIONSHIP",
-];
+use crate::write::step::schema::ROOTS;
 
 /// How far attributes may be from what others say, as a share.
 const AGREE: f64 = 1e-9;

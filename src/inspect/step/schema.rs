@@ -1,41 +1,11 @@
 //! Whether instances are as the published schema has their entities: number, types and kinds of parameters.
 
-use std::collections::{BTreeMap, HashMap, HashSet};
+use std::collections::HashSet;
 
 use super::access::finding;
 use crate::inspect::Finding;
 use crate::inspect::part21::{Entry, Exchange, Kind, Value, decode};
-use crate::write::step::SCHEMA;
-
-/// An attribute's type.
-#[derive(Debug)]
-enum Type {
-    /// STRING, REAL, INTEGER, NUMBER, BOOLEAN or LOGICAL.
-    Simple(&'static str),
-    Enumeration(Vec<String>),
-    Aggregate(usize, Option<usize>, Box<Self>),
-    Entity(String),
-    /// Entities by reference, and other types by name.
-    Select(Vec<String>, BTreeMap<String, Self>),
-}
-
-#[derive(Debug)]
-struct Attribute {
-    name: &'static str,
-    optional: bool,
-    of: Type,
-}
-
-#[derive(Debug, Default)]
-struct Entity {
-    supertypes: Vec<String>,
-    own: Vec<Attribute>,
-    redeclared: Vec<Attribute>,
-    derived: Vec<&'static str>,
-}
-
-/// Entities by their names in capitals.
-type Entities = HashMap<String, Entity>;
+use crate::write::step::schema::{Attribute, Entity, Schema, Type};
 
 /// What every instance of one kind has to be.
 struct Shape<'a> {
@@ -47,21 +17,14 @@ struct Shape<'a> {
 
 /// Checks every instance; gives the names of entities that the schema's excerpt lacks.
 pub(super) fn check(file: &Exchange<'_>, faults: &mut Vec<Finding>) -> Vec<String> {
-    let entities: Entities = SCHEMA
-        .lines()
-        .filter(|line| !line.starts_with('#'))
-        .map(entity)
-        .collect();
+    let schema = Schema::excerpt();
     let mut unknown = Vec::new();
     let shapes: Vec<Option<Shape<'_>>> = (file.kinds.iter())
         .map(|kind| {
-            let missing = kind
-                .keywords
-                .iter()
-                .filter(|keyword| !entities.contains_key(*keyword));
+            let missing = kind.keywords.iter().filter(|keyword| !schema.has(keyword));
             let before = unknown.len();
             unknown.extend(missing.cloned());
-            (unknown.len() == before).then(|| shape(&entities, kind))
+            (unknown.len() == before).then(|| shape(&schema, kind))
         })
         .collect();
     let check = Check { file, shapes };
@@ -71,48 +34,24 @@ pub(super) fn check(file: &Exchange<'_>, faults: &mut Vec<Finding>) -> Vec<Strin
     unknown
 }
 
-fn lineage<'a>(entities: &'a Entities, keyword: &str) -> Vec<&'a str> {
-    let mut found: Vec<&str> = Vec::new();
-    if let Some((name, entity)) = entities.get_key_value(keyword) {
-        for name in entity
-            .supertypes
-            .iter()
-            .flat_map(|supertype| lineage(entities, supertype))
-        {
-            if !found.contains(&name) {
-                found.push(name);
-            }
-        }
-        found.push(name);
-    }
-    found
-}
-
-fn shape<'a>(entities: &'a Entities, kind: &Kind) -> Shape<'a> {
-    let all: Vec<&str> = kind
+fn shape<'a>(schema: &'a Schema, kind: &Kind) -> Shape<'a> {
+    let all: Vec<(&str, &Entity)> = kind
         .keywords
         .iter()
-        .flat_map(|keyword| lineage(entities, keyword))
+        .flat_map(|keyword| schema.lineage(keyword))
         .collect();
-    let derived = |name: &str| all.iter().any(|entity| entities[*entity].derived.contains(&name));
+    let derived = |name: &str| all.iter().any(|(_, entity)| entity.derived.contains(&name));
     let redeclared = |name: &str| {
-        (all.iter()).find_map(|entity| {
-            entities[*entity]
-                .redeclared
-                .iter()
-                .find(|attribute| attribute.name == name)
-        })
+        let mut all = all.iter().flat_map(|(_, entity)| &entity.redeclared);
+        all.find(|attribute| attribute.name == name)
     };
     let record = |keyword: &String| {
-        let (own, name) = entities
-            .get_key_value(keyword)
-            .map_or(("", ""), |(name, _)| (&name[..], &name[..]));
-        let owners = if kind.complex {
-            vec![own]
+        let owners: Vec<(&str, &Entity)> = if kind.complex {
+            schema.entity(keyword).into_iter().collect()
         } else {
-            lineage(entities, name)
+            schema.lineage(keyword)
         };
-        (owners.iter().flat_map(|owner| &entities[*owner].own))
+        (owners.into_iter().flat_map(|(_, owner)| &owner.own))
             .map(|attribute| {
                 (
                     redeclared(attribute.name).unwrap_or(attribute),
@@ -123,7 +62,7 @@ fn shape<'a>(entities: &'a Entities, kind: &Kind) -> Shape<'a> {
     };
     Shape {
         records: kind.keywords.iter().map(record).collect(),
-        lineage: all.iter().copied().collect(),
+        lineage: all.iter().map(|(name, _)| *name).collect(),
     }
 }
 
@@ -198,71 +137,5 @@ impl Check<'_, '_> {
             .entry(id)
             .and_then(|entry| self.shapes[entry.kind()].as_ref());
         shape.is_none_or(|shape| shape.lineage.contains(name))
-    }
-}
-
-/// One line of the excerpt.
-fn entity(line: &'static str) -> (String, Entity) {
-    let mut parts = line.split(';').map(str::trim);
-    let (name, supertypes) = (parts.next().and_then(|head| head.split_once('<')))
-        .expect("each line of the excerpt names an entity and its supertypes");
-    let name = name.split_whitespace().next().unwrap_or(name).to_uppercase();
-    let mut entity = Entity {
-        supertypes: supertypes.split_whitespace().map(str::to_uppercase).collect(),
-        ..Entity::default()
-    };
-    for part in parts {
-        if let Some(name) = part.strip_prefix("DERIVE ") {
-            entity.derived.push(name);
-            continue;
-        }
-        let (name, of) = part
-            .split_once(": ")
-            .expect("each attribute of the excerpt has a type");
-        let (optional, of) = of.strip_prefix("OPTIONAL ").map_or((false, of), |of| (true, of));
-        let attribute = |name| Attribute {
-            name,
-            optional,
-            of: type_of(of),
-        };
-        match name.strip_prefix("SELF.") {
-            Some(name) => entity.redeclared.push(attribute(name)),
-            None => entity.own.push(attribute(name)),
-        }
-    }
-    (name, entity)
-}
-
-fn type_of(text: &'static str) -> Type {
-    let inside = |start| text.strip_prefix(start).and_then(|text| text.strip_suffix(')'));
-    if let Some(bounds) = text.strip_prefix('[') {
-        let (bounds, of) = bounds
-            .split_once("] ")
-            .expect("an aggregate of the excerpt has bounds");
-        let (least, most) = bounds
-            .split_once(':')
-            .expect("an aggregate of the excerpt has two bounds");
-        Type::Aggregate(
-            least.parse().unwrap_or(0),
-            most.parse().ok(),
-            Box::new(type_of(of)),
-        )
-    } else if let Some(values) = inside("ENUMERATION(") {
-        Type::Enumeration(values.split(' ').map(str::to_uppercase).collect())
-    } else if let Some(members) = inside("SELECT(") {
-        let (mut entities, mut types) = (Vec::new(), BTreeMap::new());
-        for member in members.split(" | ") {
-            match member.split_once('=') {
-                Some((name, of)) => {
-                    types.insert(name.to_uppercase(), type_of(of));
-                }
-                None => entities.push(member.to_uppercase()),
-            }
-        }
-        Type::Select(entities, types)
-    } else if text.chars().all(|c| c.is_ascii_uppercase()) {
-        Type::Simple(text)
-    } else {
-        Type::Entity(text.to_uppercase())
     }
 }

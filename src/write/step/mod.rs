@@ -16,6 +16,7 @@ mod presentation;
 mod product;
 mod property;
 mod reference;
+pub(crate) mod schema;
 mod shape;
 mod style;
 #[cfg(test)]
@@ -40,9 +41,6 @@ use property::{write_attributes, write_properties};
 use reference::write_reference;
 use shape::write_solid;
 use units::Units;
-
-/// The published schema's entities that are written, with their supertypes: what a file is checked against.
-pub(crate) const SCHEMA: &str = include_str!("schema.txt");
 
 /// What headers name the schemas: AP242, AP214.
 pub(crate) const SCHEMAS: [&str; 2] = [
