@@ -97,15 +97,6 @@ impl Profile {
             lower: mix(&self.lower, &other.lower),
         }
     }
-
-    /// The profile with its ordinates multiplied by `factor`.
-    pub fn thickened(&self, factor: f64) -> Self {
-        let scale = |points: &[[f64; 2]]| points.iter().map(|[x, y]| [*x, y * factor]).collect();
-        Self {
-            upper: scale(&self.upper),
-            lower: scale(&self.lower),
-        }
-    }
 }
 
 impl Profiles {
@@ -154,10 +145,18 @@ impl Profiles {
 
 /// Fits `sections` on shared knots within `tolerance` \[chord\] of each.
 ///
+/// What the curve through a file's points has used up of the tolerance, the fit does not use again, up to half of it; a
+/// section that was given leave to be farther from its points still gets that half.
+///
 /// # Errors
 ///
 /// [`Error::Fit`] where no reasonable number of knots reaches the tolerance.
 pub fn fit(sections: &[&Section], tolerance: f64) -> Result<Profiles, Error> {
+    let used = sections
+        .iter()
+        .map(|section| section.deviation)
+        .fold(0.0, f64::max);
+    let tolerance = (tolerance - used).max(0.5 * tolerance);
     let side = |pick: fn(&Section) -> &Side| {
         let sides: Vec<&Side> = sections.iter().map(|section| pick(section)).collect();
         fit_sides(&sides, tolerance).ok_or_else(|| why_not(sections, tolerance))
