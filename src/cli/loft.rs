@@ -34,13 +34,7 @@ pub(super) fn run(options: &LoftOptions, output: &Output) -> Result<bool, Failur
     let stem = path
         .file_stem()
         .map_or_else(|| "wing".into(), |stem| stem.to_string_lossy());
-    let kinds: Vec<Kind> = Kind::ALL
-        .into_iter()
-        .filter(|kind| match options.only.as_slice() {
-            [] => Kind::USUAL.contains(kind),
-            only => only.contains(kind),
-        })
-        .collect();
+    let kinds = Kind::chosen(&options.only);
     let named = Options {
         time_stamp: &stamp,
         id: &stem,

@@ -3,12 +3,23 @@
 //! A [`Loft`] is the starboard side: sections on shared knots at the stations, joined panel by panel by straight
 //! elements, or all by one spline that is curvature-continuous along the span. Its port side is the mirror image (see [`Loft::mirrored`]).
 
+mod round_tip;
+mod rows;
+mod section;
+mod straight;
+mod trailing_edge;
+
+pub use round_tip::RoundTip;
+pub use section::Section;
+pub use trailing_edge::TrailingEdge;
+
 use nalgebra::{Point3, Vector3};
 use thiserror::Error;
 
 use crate::airfoil::{Profile, Profiles};
-use crate::planform::{Planform, SpanLaw, Station};
-use crate::spline::{Curve, Interpolation, Knots, Surface, WeightedSurface, part_from};
+use crate::planform::{Planform, SpanLaw};
+use crate::spline::{Curve, Knots, Surface};
+use rows::{cut, through};
 
 /// Least trailing-edge thickness that is built where some station's is blunt \[mm\]: readers merge what is finer.
 pub const LEAST_BASE: f64 = 0.01;
@@ -56,61 +67,6 @@ pub struct Loft {
     pub opened: bool,
 }
 
-/// A tip of half ellipses on the last section.
-///
-/// Upper and lower side are on the same knots then. For each pair of their control points U and L, with r = |U - L|/2 and
-/// the outward direction d, the control points are U, U + r d, (U + L)/2 + r d, L + r d, L with weights 1, √½, 1, √½, 1: at
-/// every chord station half an ellipse from the upper to the lower side.
-#[derive(Clone, Debug, PartialEq)]
-pub struct RoundTip {
-    /// The surface: u from the nose to the trailing edge, v from the upper side to the lower.
-    pub surface: WeightedSurface,
-    /// How far it stands out \[mm\].
-    pub reach: f64,
-}
-
-impl RoundTip {
-    fn on(section: &Section, knots: &Knots, outwards: &Vector3<f64>) -> Self {
-        let mut rows = vec![section.upper.clone()];
-        let radius = |i: usize| 0.5 * (section.upper[i] - section.lower[i]).norm();
-        let count = section.upper.len();
-        let out = |points: &dyn Fn(usize) -> Point3<f64>| {
-            (0..count).map(|i| points(i) + outwards * radius(i)).collect()
-        };
-        rows.push(out(&|i| section.upper[i]));
-        rows.push(out(&|i| nalgebra::center(&section.upper[i], &section.lower[i])));
-        rows.push(out(&|i| section.lower[i]));
-        rows.push(section.lower.clone());
-        let across =
-            Knots::clamped(2, 0.0, 1.0, &[0.5, 0.5]).expect("a double knot in a parabola is allowed");
-        let half = std::f64::consts::FRAC_1_SQRT_2;
-        Self {
-            surface: WeightedSurface {
-                surface: Surface {
-                    u: knots.clone(),
-                    v: across,
-                    rows,
-                },
-                weights: vec![1.0, half, 1.0, half, 1.0],
-            },
-            reach: (0..count).map(radius).fold(0.0, f64::max),
-        }
-    }
-
-    /// The half ellipse at the trailing edge, from the upper edge of the base to the lower: control points.
-    pub fn rear(&self) -> Vec<Point3<f64>> {
-        self.surface.surface.column_curve(true).points
-    }
-
-    fn moved(&self, to: impl Fn(&Point3<f64>) -> Point3<f64>) -> Self {
-        let mut tip = self.clone();
-        for point in tip.surface.surface.rows.iter_mut().flatten() {
-            *point = to(point);
-        }
-        tip
-    }
-}
-
 /// The way from one section to the next.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Strip {
@@ -118,53 +74,6 @@ pub struct Strip {
     pub knots: Knots,
     /// Control rows between the two sections, not counting them: none where elements are straight.
     pub rows: Vec<Section>,
-}
-
-/// A section placed in space.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Section {
-    /// Control points of the upper side \[mm\].
-    pub upper: Vec<Point3<f64>>,
-    /// Control points of the lower side \[mm\].
-    pub lower: Vec<Point3<f64>>,
-}
-
-impl Section {
-    fn at(station: &Station, profile: &Profile) -> Self {
-        let place = |points: &[[f64; 2]]| points.iter().map(|point| station.place(*point)).collect();
-        let mut section = Self {
-            upper: place(&profile.upper),
-            lower: place(&profile.lower),
-        };
-        section.lower[0] = section.upper[0];
-        section
-    }
-
-    /// The section a share of the way along straight elements to another.
-    fn towards(&self, other: &Self, share: f64) -> Self {
-        let mix = |a: &[Point3<f64>], b: &[Point3<f64>]| {
-            a.iter().zip(b).map(|(a, b)| a + (b - a) * share).collect()
-        };
-        Self {
-            upper: mix(&self.upper, &other.upper),
-            lower: mix(&self.lower, &other.lower),
-        }
-    }
-
-    /// The chord line's front end: where upper and lower side meet \[mm\].
-    pub fn nose(&self) -> Point3<f64> {
-        self.upper[0]
-    }
-
-    /// Upper edge of the base \[mm\].
-    pub fn upper_tail(&self) -> Point3<f64> {
-        self.upper[self.upper.len() - 1]
-    }
-
-    /// Lower edge of the base; where the trailing edge is sharp the same as the upper \[mm\].
-    pub fn lower_tail(&self) -> Point3<f64> {
-        self.lower[self.lower.len() - 1]
-    }
 }
 
 impl Loft {
@@ -400,92 +309,6 @@ impl Loft {
             points: self.sections[k].lower.clone(),
         }
     }
-
-    /// A loft with straight elements only that is within `tolerance` \[mm\] of this one, and how far it is from it.
-    ///
-    /// Strips that are curved along the span are cut into as many straight ones as that takes.
-    pub fn straightened(&self, tolerance: f64) -> (Self, f64) {
-        let mut loft = Self {
-            sections: vec![self.sections[0].clone()],
-            strips: Vec::new(),
-            ..self.clone()
-        };
-        let mut worst = 0.0_f64;
-        for k in 0..self.panels() {
-            if self.strips[k].knots.degree() > 1 {
-                let skins = [self.upper(k), self.lower(k)];
-                let mut parts = 4_u32;
-                let mut deviation = sag(&skins, parts);
-                while deviation > tolerance && parts < 2000 {
-                    parts = (parts + 1).max(parts * 6 / 5);
-                    deviation = sag(&skins, parts);
-                }
-                worst = worst.max(deviation);
-                let (from, to) = self.strips[k].knots.range();
-                for j in 1..parts {
-                    let v = from + (to - from) * f64::from(j) / f64::from(parts);
-                    loft.sections.push(self.section_at(k, v));
-                }
-            }
-            loft.sections.push(self.sections[k + 1].clone());
-        }
-        loft.strips = vec![
-            Strip {
-                knots: Knots::bezier(1),
-                rows: Vec::new()
-            };
-            loft.sections.len() - 1
-        ];
-        loft.places.clear();
-        (loft, worst)
-    }
-
-    /// The section of panel `k` at the spanwise parameter `v`, as control points.
-    pub fn section_at(&self, k: usize, v: f64) -> Section {
-        let knots = &self.strips[k].knots;
-        let (first, basis) = knots.basis(v);
-        let rows: Vec<&Section> = self.rows(k).skip(first).take(knots.degree() + 1).collect();
-        let mix = |pick: fn(&Section) -> &Vec<Point3<f64>>| -> Vec<Point3<f64>> {
-            (0..pick(rows[0]).len())
-                .map(|i| {
-                    let weighted = rows.iter().zip(&basis);
-                    Point3::from(
-                        weighted.fold(Vector3::zeros(), |sum, (row, b)| sum + pick(row)[i].coords * *b),
-                    )
-                })
-                .collect()
-        };
-        let mut section = Section {
-            upper: mix(|s| &s.upper),
-            lower: mix(|s| &s.lower),
-        };
-        section.lower[0] = section.upper[0];
-        section
-    }
-}
-
-/// How thick the trailing edge is to be.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct TrailingEdge {
-    /// At least this \[mm\]: `None` as the sections define it, 0 sharp.
-    pub thickness: Option<f64>,
-    /// At least this part of the chord \[-\].
-    pub ratio: Option<f64>,
-}
-
-impl TrailingEdge {
-    /// Thickness of the base at a station \[chord\].
-    fn base(self, station: &Station, profile: &Profile) -> f64 {
-        let ratio = self.ratio.unwrap_or(0.0) / station.mitre;
-        match self.thickness {
-            None => profile.base().max(ratio),
-            Some(0.0) => ratio,
-            Some(least) => profile
-                .base()
-                .max(least / (station.chord * station.mitre))
-                .max(ratio),
-        }
-    }
 }
 
 /// Every straight element must lead outwards along its panel.
@@ -516,70 +339,4 @@ fn check(sections: &[Section], planform: &Planform) -> Result<(), Error> {
         }
     }
     Ok(())
-}
-
-/// Control rows of the spline through sections.
-fn through(spline: &Interpolation, sections: &[Section]) -> Vec<Section> {
-    let column = |pick: fn(&Section) -> &Vec<Point3<f64>>, i: usize| -> Vec<Point3<f64>> {
-        spline.through(
-            &sections
-                .iter()
-                .map(|section| pick(section)[i])
-                .collect::<Vec<_>>(),
-        )
-    };
-    let columns = |pick: fn(&Section) -> &Vec<Point3<f64>>| -> Vec<Vec<Point3<f64>>> {
-        (0..pick(&sections[0]).len()).map(|i| column(pick, i)).collect()
-    };
-    transposed(&columns(|s| &s.upper), &columns(|s| &s.lower))
-}
-
-/// The part of a spline of control rows from `v` on.
-fn cut(knots: &Knots, rows: &[Section], v: f64) -> Option<(Knots, Vec<Section>)> {
-    let mut kept = None;
-    let mut columns = |pick: fn(&Section) -> &Vec<Point3<f64>>| -> Option<Vec<Vec<Point3<f64>>>> {
-        (0..pick(&rows[0]).len())
-            .map(|i| {
-                let column: Vec<Point3<f64>> = rows.iter().map(|row| pick(row)[i]).collect();
-                let (knots, control) = part_from(knots, &column, v)?;
-                kept = Some(knots);
-                Some(control)
-            })
-            .collect()
-    };
-    let (upper, lower) = (columns(|s| &s.upper)?, columns(|s| &s.lower)?);
-    Some((kept?, transposed(&upper, &lower)))
-}
-
-fn transposed(upper: &[Vec<Point3<f64>>], lower: &[Vec<Point3<f64>>]) -> Vec<Section> {
-    (0..upper[0].len())
-        .map(|row| {
-            let mut section = Section {
-                upper: upper.iter().map(|column| column[row]).collect(),
-                lower: lower.iter().map(|column| column[row]).collect(),
-            };
-            section.lower[0] = section.upper[0];
-            section
-        })
-        .collect()
-}
-
-/// Largest distance between a strip's skins and straight elements between `parts` equal parts of it \[mm\].
-fn sag(skins: &[Surface; 2], parts: u32) -> f64 {
-    let mut worst = 0.0_f64;
-    for skin in skins {
-        let (from, to) = skin.v.range();
-        for u in [0.0, 0.05, 0.15, 0.3, 0.5, 0.7, 0.85, 1.0] {
-            for j in 0..parts {
-                let v = |share: f64| from + (to - from) * (f64::from(j) + share) / f64::from(parts);
-                let (a, b) = (skin.at(u, v(0.0)), skin.at(u, v(1.0)));
-                for share in [0.25, 0.5, 0.75] {
-                    let off = skin.at(u, v(share)) - a;
-                    // what matters is the distance from the element, not the place along it
-                    worst = worst.max(off.cross(&(b - a)).norm() / (b - a).norm());
-                }
-            }
-        }
-    }
-    worst
 }

@@ -7,5 +7,5 @@ mod slice;
 mod solid;
 
 pub use compare::{Ask, Check, Quantity, compare};
-pub use slice::{Chord, Slices, Spanwise};
+pub use slice::{Chord, Planform, Slices, Spanwise};
 pub use solid::{Figures, figures};

@@ -58,6 +58,8 @@ pub struct Planform {
     pub incidence: f64,
     /// How the incidence for cruise came about; empty where it was typed.
     pub chain: Vec<Step>,
+    /// Figures of one side as the law between the stations makes it, from where the built wing begins.
+    pub expected: Expected,
 }
 
 /// One panel of the reference wing.
@@ -138,6 +140,7 @@ impl Planform {
             shift: Vector3::zeros(),
             incidence: 0.0,
             chain: Vec::new(),
+            expected: Expected::default(),
         };
         let shape = match spec.outline {
             Outline::Trapezoid => Shape::Straight,
@@ -179,6 +182,7 @@ impl Planform {
         planform.check_smooth()?;
         planform.wing = ReferenceWing::of(&planform, &integrals, place);
         planform.start = planform.body_side(spec)?;
+        planform.expected = planform.expect();
         planform.shift = planform.placing(spec);
         Ok(planform)
     }
@@ -343,7 +347,7 @@ impl Planform {
 
     /// Figures of one side that straight (or smooth) elements make between the stations, by Simpson's rule: a little
     /// less area than the reference wing's where panels are twisted, because chords between stations are shorter.
-    pub fn expected(&self) -> Expected {
+    fn expect(&self) -> Expected {
         let mut sums = [0.0; 3];
         let last = self.stations.len() - 1;
         for k in 0..last {
@@ -378,7 +382,7 @@ impl Planform {
 }
 
 /// Figures of one side as it is built.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub struct Expected {
     /// Area \[mm²\].
     pub area: f64,

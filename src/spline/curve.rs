@@ -53,14 +53,6 @@ pub struct Curve {
 }
 
 impl Curve {
-    /// The straight line from `a` to `b`, of degree 1.
-    pub fn line(a: Point3<f64>, b: Point3<f64>) -> Self {
-        Self {
-            knots: Knots::bezier(1),
-            points: vec![a, b],
-        }
-    }
-
     /// Point at `t` \[mm\].
     pub fn at(&self, t: f64) -> Point3<f64> {
         let (first, basis) = self.knots.basis(t);

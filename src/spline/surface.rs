@@ -28,15 +28,6 @@ pub struct Derivative {
 }
 
 impl Surface {
-    /// The ruled surface between two curves on the same knots: v = 0 is the first, v = 1 the second.
-    pub fn ruled(knots: Knots, first: Vec<Point3<f64>>, second: Vec<Point3<f64>>) -> Self {
-        Self {
-            u: knots,
-            v: Knots::bezier(1),
-            rows: vec![first, second],
-        }
-    }
-
     /// Point at (u, v) \[mm\].
     pub fn at(&self, u: f64, v: f64) -> Point3<f64> {
         let (first_u, basis_u) = self.u.basis(u);
@@ -71,15 +62,6 @@ impl Surface {
             point: Point3::from(sums[0]),
             u: sums[1],
             v: sums[2],
-        }
-    }
-
-    /// The boundary curve at the first (`false`) or last (`true`) v, along u: the surface's own control row.
-    pub fn row_curve(&self, last: bool) -> Curve {
-        let row = if last { self.rows.len() - 1 } else { 0 };
-        Curve {
-            knots: self.u.clone(),
-            points: self.rows[row].clone(),
         }
     }
 

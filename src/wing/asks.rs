@@ -1,6 +1,6 @@
 //! What is asked of the solid, beside what is found on it.
 
-use crate::measure::{Ask, Quantity, Slices};
+use crate::measure::{self, Ask, Quantity, Slices};
 use crate::planform::{ChordLine, Planform, SpanLaw};
 use crate::spec::{IncidenceAt, Outline, Sides, Spec};
 
@@ -14,6 +14,7 @@ pub(super) fn asks(spec: &Spec, planform: &Planform, slices: &Slices) -> Vec<Ask
     let mut asks = Asks {
         list: Vec::new(),
         length: RELATIVE * planform.wing.span,
+        found: slices.planform(),
     };
     let sides = match spec.sides {
         Sides::Both | Sides::Pair => 2.0,
@@ -29,6 +30,8 @@ struct Asks {
     list: Vec<Ask>,
     /// Allowed deviation of lengths \[mm\].
     length: f64,
+    /// Integrals over the chords found.
+    found: measure::Planform,
 }
 
 impl Asks {
@@ -57,7 +60,7 @@ impl Asks {
     /// between twisted stations are a little shorter than the trapezoid's, and that much is allowed (see the note).
     /// Elsewhere what was laid out is asked for.
     fn whole(&mut self, spec: &Spec, planform: &Planform, slices: &Slices, sides: f64) {
-        let (found, expected) = (slices.planform(), planform.expected());
+        let (found, expected) = (self.found, planform.expected);
         let reference = 0.5 * planform.wing.area;
         let straight = matches!(planform.law, SpanLaw::Straight);
         let whole = planform.start == 0.0 && (straight || spec.outline == Outline::Ellipse);
@@ -106,7 +109,7 @@ impl Asks {
 
     /// The mean aerodynamic chord: of the whole wing, and the built section where it lies.
     fn mean_chord(&mut self, spec: &Spec, planform: &Planform, slices: &Slices) {
-        let (mac, found, expected) = (&planform.wing.mac, slices.planform(), planform.expected());
+        let (mac, found, expected) = (&planform.wing.mac, self.found, planform.expected);
         if planform.start == 0.0 {
             let allowed = self.length + (mac.length - expected.mac).abs();
             self.add(

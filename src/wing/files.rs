@@ -32,6 +32,15 @@ impl Kind {
     /// The kinds that are written where none are named.
     pub const USUAL: [Self; 3] = [Self::Step, Self::Stl, Self::Json];
 
+    /// The kinds that are written where these are named: the usual ones where none is.
+    pub fn chosen(named: &[Self]) -> Vec<Self> {
+        let wanted = if named.is_empty() { &Self::USUAL } else { named };
+        Self::ALL
+            .into_iter()
+            .filter(|kind| wanted.contains(kind))
+            .collect()
+    }
+
     /// Its name on the command line and in the figures.
     pub const fn name(self) -> &'static str {
         match self {

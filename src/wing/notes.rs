@@ -53,7 +53,7 @@ pub(super) fn notes(
              merge what is finer."
         ));
     }
-    let shortfall = 1.0 - 2.0 * planform.expected().area / planform.wing.area;
+    let shortfall = 1.0 - 2.0 * planform.expected.area / planform.wing.area;
     if shortfall > 1e-9 && planform.start == 0.0 && matches!(planform.law, SpanLaw::Straight) {
         notes.push(format!(
             "Straight elements between twisted stations make the chords between them shorter, and the planform area \

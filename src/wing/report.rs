@@ -3,9 +3,9 @@
 use std::collections::BTreeMap;
 
 use super::Wing;
-use super::shape::facets;
+use super::shape::{facets, solids_of};
 use crate::mesh::Mesh;
-use crate::spec::{IncidenceAt, Sides};
+use crate::spec::IncidenceAt;
 use crate::write::drawing::{Setting, angle_text, length_text, trimmed};
 use crate::write::picture::picture;
 use crate::write::record::Record;
@@ -54,16 +54,11 @@ impl Wing {
     pub(super) fn facets_within(&self, tolerance: f64) -> Vec<Mesh> {
         let shift = &self.planform.shift;
         let (starboard, port) = (self.loft.shifted(shift), self.loft.mirrored().shifted(shift));
-        let groups = match self.spec.sides {
-            Sides::Starboard => vec![vec![&starboard]],
-            Sides::Port => vec![vec![&port]],
-            Sides::Both | Sides::Pair if self.solids.len() == 1 => vec![vec![&starboard, &port]],
-            Sides::Both | Sides::Pair => vec![vec![&starboard], vec![&port]],
-        };
+        let groups = solids_of(self.spec.sides, self.planform.start == 0.0, &starboard, &port);
         let unit = self.spec.unit.millimetres();
         let finer: Result<Vec<Mesh>, _> = groups
             .iter()
-            .map(|lofts| facets(lofts, tolerance, unit))
+            .map(|(_, lofts)| facets(lofts, tolerance, unit))
             .collect();
         // where such facets fall together in 32-bit numbers the wing's own will do
         finer.unwrap_or_else(|_| self.meshes.clone())

@@ -89,15 +89,7 @@ impl Wing {
         }
         let starboard = at_origin.shifted(&planform.shift);
         let port = at_origin.mirrored().shifted(&planform.shift);
-        let groups: Vec<(&str, Vec<&Loft>)> = match spec.sides {
-            Sides::Both if planform.start == 0.0 => vec![("wing", vec![&starboard, &port])],
-            Sides::Starboard => vec![("starboard wing", vec![&starboard])],
-            Sides::Port => vec![("port wing", vec![&port])],
-            // with a fuselage between them both sides are two solids
-            Sides::Both | Sides::Pair => {
-                vec![("starboard wing", vec![&starboard]), ("port wing", vec![&port])]
-            }
-        };
+        let groups = solids_of(spec.sides, planform.start == 0.0, &starboard, &port);
         let solids = groups
             .iter()
             .map(|(name, lofts)| solid::build(name, lofts))
@@ -145,6 +137,23 @@ impl Wing {
     /// Whether everything asked for was found on the solid.
     pub fn is_as_asked(&self) -> bool {
         self.checks.iter().all(|check| check.ok)
+    }
+}
+
+/// The solids that are built, each with its name and its one or two sides. Sides that do not reach the centreline, because a
+/// fuselage is between them, are two solids.
+pub(super) fn solids_of<'a>(
+    sides: Sides,
+    reach_centreline: bool,
+    starboard: &'a Loft,
+    port: &'a Loft,
+) -> Vec<(&'static str, Vec<&'a Loft>)> {
+    let (right, left) = (("starboard wing", vec![starboard]), ("port wing", vec![port]));
+    match sides {
+        Sides::Both if reach_centreline => vec![("wing", vec![starboard, port])],
+        Sides::Starboard => vec![right],
+        Sides::Port => vec![left],
+        Sides::Both | Sides::Pair => vec![right, left],
     }
 }
 

@@ -42,13 +42,7 @@ pub(super) fn run(spec: &Path, options: &FamilyOptions, output: &Output) -> Resu
         None => Plan::combinations(options.vary.clone()).map_err(Trouble::Plan)?,
     };
     let directory = spec.parent().unwrap_or(Path::new(""));
-    let kinds: Vec<Kind> = Kind::ALL
-        .into_iter()
-        .filter(|kind| match options.only.as_slice() {
-            [] => Kind::USUAL.contains(kind),
-            only => only.contains(kind),
-        })
-        .collect();
+    let kinds = Kind::chosen(&options.only);
     let family = Family {
         text,
         file,
